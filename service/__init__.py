@@ -1,0 +1,1 @@
+"""The service around the domain library: command line, API and pages."""

@@ -1,0 +1,1 @@
+"""Antenna sheets: claims read, normalised and held against physics."""

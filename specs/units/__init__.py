@@ -1,0 +1,1 @@
+"""Printed numbers and units: numerals, spellings, levels and linear units."""
