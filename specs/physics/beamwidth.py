@@ -118,7 +118,7 @@ def convex_limit_dbi(width1_deg: Real, width2_deg: Real) -> Real:
     32.17
     """
     solid_angle = convex_solid_angle(width1_deg, width2_deg)
-    limit: Any = np.where(np.isnan(solid_angle), np.inf, to_db(8 * np.pi / solid_angle))
+    limit: Any = np.where(np.isnan(solid_angle), np.inf, to_db(np.divide(8 * np.pi, solid_angle)))
     return limit[()]
 
 

@@ -21,11 +21,11 @@ _Function = TypeVar("_Function", bound=Callable[..., Any])
 def elementwise(function: _Function) -> _Function:
     """Lets a function written for numpy answer floats with plain floats, and keep silent.
 
-    Numbers and lists become numpy's own before the call, for Python's floats raise where numpy's
-    answer: division by zero and invalid values give inf and nan without a warning (the return loss
-    of a perfect match is infinite). Single results become Python's floats after it, for reports
-    and JSON. Modules that use it switch mypy's warn_return_any off, because numpy types its
-    functions of a float as Any.
+    Numbers and lists (words stay) become numpy's own before the call, for Python's floats raise
+    where numpy's answer: division by zero and invalid values give inf and nan without a warning
+    (the return loss of a perfect match is infinite). Single results become Python's floats after
+    it, for reports and JSON. Modules that use it switch mypy's warn_return_any off, because numpy
+    types its functions of a float as Any.
 
     >>> @elementwise
     ... def inverse(x: float) -> float:
@@ -49,4 +49,6 @@ def elementwise(function: _Function) -> _Function:
 def _number(value: Any) -> Any:
     if isinstance(value, float | int):
         return np.float64(value)
+    if isinstance(value, str):
+        return value
     return np.asarray(value, dtype=np.float64)
