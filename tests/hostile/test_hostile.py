@@ -60,13 +60,16 @@ def numbers(data: Any) -> Iterator[float]:
 
 def outcome(checker: Checker, path: Path) -> str:
     """The code of the typed error, or ``report``; any other exception passes through and fails."""
+    failed: SheetError | None = None
     try:
         report = checker.check_file(path)
     except SheetError as error:
-        assert error.message, "an error without a message helps nobody"
-        assert error.advice, "an error without advice helps nobody"
-        assert "Traceback" not in str(error)
-        return error.code
+        failed = error
+    if failed is not None:
+        assert failed.message, "an error without a message helps nobody"
+        assert failed.advice, "an error without advice helps nobody"
+        assert "Traceback" not in str(failed)
+        return failed.code
     data = as_data(report)
     text = json.dumps(data, allow_nan=False)  # as it would leave the service
     assert len(text) < 20_000_000, f"a report of {len(text)} characters"
