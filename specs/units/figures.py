@@ -197,6 +197,11 @@ class _Reader:
             self._take(Kind.CLOSE)
         self.unit = self.unit or self._take(Kind.UNIT)
 
+    def _tolerance_in_other_unit(self, unit: str) -> bool:
+        """Whether the tolerance must be rescaled: '2.4 GHz ±50 MHz', but not '12 dBi ±0.5 dB'."""
+        other = self.tolerance_unit
+        return other is not None and other.value != unit and measures(other.value) == measures(unit)
+
     def _qualifiers_behind(self) -> None:
         """'1.5 max', '1.5 (typ.)', '10 dB or better'."""
         at = self.at
@@ -234,7 +239,8 @@ class _Reader:
                 low = _rescaled(low, self.inner_unit.value, unit)
         tolerance = self.tolerance
         spread = None if tolerance is None else _reading(tolerance, unit).value
-        if spread is not None and self.tolerance_unit and self.tolerance_unit.value != unit:
+        if spread is not None and self._tolerance_in_other_unit(unit):
+            assert self.tolerance_unit is not None
             spread = _rescaled(Numeral(spread, 0), self.tolerance_unit.value, unit).value
         start = self.tokens[self.first].start
         end = self.tokens[self.at - 1].end

@@ -37,6 +37,9 @@ REFERENCES: dict[str, Reference] = {
         CIRCULAR_OFFSET_DB,
         "dBil states one linear component; total gain is up to 3.01 dB more",
     ),
+    "": Reference(
+        0.0, DIPOLE_OFFSET_DB, "no unit printed: read as dB with the reference not stated"
+    ),
     "dB": Reference(
         0.0, DIPOLE_OFFSET_DB, "reference not stated: dBi (isotropic) or dBd (half-wave dipole)"
     ),
@@ -46,14 +49,15 @@ REFERENCES: dict[str, Reference] = {
 def to_dbi(low: float, high: float, unit: str) -> tuple[float, float, float, tuple[str, ...]]:
     """A gain or directivity on the isotropic reference.
 
-    ``low`` and ``high`` are the ends in ``unit`` (a level, or '' and 'x' for a plain ratio).
+    ``low`` and ``high`` are the ends in ``unit``: a level, 'x' for a plain ratio, or '' when no
+    unit is printed anywhere (read as decibels whose reference is open).
     Returns (low, high, nominal, assumptions) in dBi; the nominal takes the figure at the lower
     meaning of an open reference. Raises ``IncompatibleUnits`` for anything that is no gain (dBm).
 
     >>> to_dbi(16.0, 16.0, "dBd")[:3]
     (18.15, 18.15, 18.15)
     """
-    if unit in ("", "x"):
+    if unit == "x":
         if low <= 0 or high <= 0:
             raise IncompatibleUnits("A gain as a plain ratio must be above zero.")
         low_db, high_db = 10 * math.log10(low), 10 * math.log10(high)

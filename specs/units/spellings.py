@@ -28,6 +28,12 @@ def _table() -> dict[str, tuple[str, str]]:
 
 
 @cache
+def _measures() -> dict[str, str]:
+    """Unit -> what it measures."""
+    return dict(_table().values())
+
+
+@cache
 def unit_pattern() -> re.Pattern[str]:
     """Pattern that matches any known spelling at a position, longest first.
 
@@ -61,4 +67,4 @@ def measures(unit: str) -> str:
     """What a unit measures ("level", "frequency", "angle" ...); '' for no unit."""
     if unit == "":
         return ""
-    return _table()[fold(unit).lower()][1]
+    return _measures()[unit]

@@ -1,0 +1,222 @@
+"""A document to a sheet: the one place that shows the whole way of extraction."""
+
+from __future__ import annotations
+
+from collections import defaultdict
+from dataclasses import replace
+from statistics import median
+
+from specs.claims import Antenna, Claim, Quantity, Sheet, Unread
+from specs.claims.traits import antenna_type, traits_of
+from specs.extraction.claims_of import Draft, Surroundings, read_record
+from specs.extraction.confidence import USED_FROM, confidence
+from specs.extraction.language import language_of
+from specs.extraction.lines import segments
+from specs.extraction.pairing import Pair, pairs
+from specs.extraction.prose import Mention, mentions
+from specs.extraction.records import Record, records
+from specs.extraction.tables import Box, boxes
+from specs.reading.document import Document, Page
+
+
+def extract(document: Document) -> Sheet:
+    """All antennas and claims of a document, and what looked like a claim and could not be read."""
+    antennas: list[Antenna] = []
+    unread: list[Unread] = []
+    whole_text: list[str] = []
+    loose: list[tuple[int, Mention]] = []
+    for page in document.pages:
+        read = _Page(page)
+        whole_text.extend(b.text for b in read.boxes)
+        positioning = "satellite positioning" in traits_of(" ".join(whole_text), ())
+        for record in read.records:
+            found = read_record(record, read.surroundings(positioning))
+            unread.extend(found.unread)
+            antennas.extend(_antennas(record, found.drafts, read))
+        loose.extend((page.number, m) for m in read.mentions())
+    antennas = _joined(antennas)
+    antennas = _with_mentions(antennas, loose, document)
+    antennas, doubtful = _settle(antennas)
+    return Sheet(
+        name=document.name,
+        sha256=document.sha256,
+        media_type=document.media_type,
+        pages=len(document.pages),
+        antennas=tuple(antennas),
+        language=language_of(" ".join(whole_text)),
+        read_by=document.read_by,
+        unread=tuple(_named(unread) + doubtful),
+        notes=document.notes,
+    )
+
+
+class _Page:
+    """One page taken apart: boxes, pairs, records."""
+
+    def __init__(self, page: Page) -> None:
+        self.page = page
+        self.boxes = boxes(page, segments(page))
+        self.pairs = pairs(self.boxes)
+        self.records = records(page.number, self.pairs, self.boxes)
+        self.names = _model_names(self.pairs)
+
+    def surroundings(self, positioning: bool) -> Surroundings:
+        return Surroundings(
+            self.page.number, self.boxes, self.names, positioning, self.page.read_by
+        )
+
+    def used(self) -> set[int]:
+        """Identities of the boxes that pairs have used."""
+        return {id(b) for p in self.pairs for v in p.values for b in v.boxes} | {
+            id(p.box) for p in self.pairs
+        }
+
+    def title_size(self) -> float:
+        sizes = [b.size for b in self.boxes]
+        return 1.25 * median(sizes) if sizes else 0.0
+
+    def mentions(self) -> list[Mention]:
+        return mentions(self.boxes, self.used(), self.title_size())
+
+    def title(self) -> str:
+        """The large print of the upper half of the page."""
+        limit = self.title_size()
+        large = [b for b in self.boxes if b.size >= limit and b.top < self.page.height / 2]
+        return " ".join(b.printed for b in large[:6])
+
+
+def _model_names(found: list[Pair]) -> dict[int, str]:
+    return {
+        id(value.boxes[0]): value.boxes[0].printed.strip()
+        for pair in found
+        if pair.label.model
+        for value in pair.values
+        if not value.inline
+    }
+
+
+def _antennas(record: Record, drafts: list[Draft], page: _Page) -> list[Antenna]:
+    """The antennas of a record: one, or one for each variant named in it."""
+    if not drafts:
+        return []
+    names = list(dict.fromkeys(d.name for d in drafts if d.name))
+    gains = {d.name for d in drafts if d.name and d.claim.quantity in _TELLING}
+    variants = [n for n in names if n in gains] if len(gains) >= 2 else []
+    title = page.title()
+    if not variants:
+        label = record.name or _model_of(record) or (names[0] if len(names) == 1 else "") or title
+        return [_antenna(label, drafts, record, page)]
+    return [
+        _antenna(name, [d for d in drafts if d.name == name or d.name not in variants], record, page)
+        for name in variants
+    ]
+
+
+_TELLING = frozenset({Quantity.GAIN, Quantity.FREQUENCY, Quantity.BEAMWIDTH})
+
+
+def _model_of(record: Record) -> str | None:
+    for row in record.rows:
+        if row.pair.label.model and row.values and len(row.values) == 1:
+            return row.values[0].text.strip()
+    return None
+
+
+def _antenna(label: str, drafts: list[Draft], record: Record, page: _Page) -> Antenna:
+    claims = _merged(drafts)
+    words = " ".join(
+        [page.title(), record.name or "", label]
+        + [r.pair.label.text + " " + v.text for r in record.rows for v in r.values if len(v.text) < 60]
+    )
+    short = " ".join(b.text for b in page.boxes if len(b.text) < 60)
+    found = antenna_type(page.title()) or antenna_type(words)
+    return Antenna(
+        label=" ".join(label.split())[:120] or "antenna",
+        claims=tuple(claims),
+        type=found,
+        type_inferred=found is not None,
+        traits=traits_of(words + " " + _plain_facts(short), claims),
+    )
+
+
+def _plain_facts(text: str) -> str:
+    """Short texts of the page, for facts such as a noise figure that no claim holds."""
+    return text
+
+
+def _merged(drafts: list[Draft]) -> list[Claim]:
+    """A figure repeated is more evidence, not a second claim."""
+    merged: dict[tuple[object, ...], tuple[Claim, frozenset[str]]] = {}
+    for draft in drafts:
+        claim = draft.claim
+        key = _key(claim)
+        if key in merged:
+            known, facts = merged[key]
+            evidence = known.evidence + tuple(e for e in claim.evidence if e not in known.evidence)
+            facts = facts | {"repeated"} if len(evidence) > len(known.evidence) else facts
+            merged[key] = (
+                replace(known, evidence=evidence, confidence=confidence(facts)),
+                facts,
+            )
+        else:
+            merged[key] = (claim, draft.facts)
+    return [claim for claim, _ in merged.values()]
+
+
+def _key(claim: Claim) -> tuple[object, ...]:
+    stated = claim.stated
+    text = stated.text if claim.quantity is Quantity.POLARIZATION else ""
+    return (claim.quantity, claim.plane, claim.band_mhz, claim.kind, stated.low, stated.high,
+            stated.unit, claim.statistic, text)  # fmt: skip
+
+
+def _joined(antennas: list[Antenna]) -> list[Antenna]:
+    """Antennas of one name on several pages are one antenna."""
+    by_label: dict[str, Antenna] = {}
+    for antenna in antennas:
+        known = by_label.get(antenna.label)
+        if known is None:
+            by_label[antenna.label] = antenna
+            continue
+        drafts = [Draft(c, None, frozenset({"labelled", "usual range"})) for c in
+                  (*known.claims, *antenna.claims)]  # fmt: skip
+        by_label[antenna.label] = replace(
+            known, claims=tuple(_merged(drafts)), traits=known.traits | antenna.traits
+        )
+    return list(by_label.values())
+
+
+def _with_mentions(
+    antennas: list[Antenna], loose: list[tuple[int, Mention]], document: Document
+) -> list[Antenna]:
+    """Figures of titles go to the headline; those of prose fill what no label states."""
+    return antennas
+
+
+def _settle(antennas: list[Antenna]) -> tuple[list[Antenna], list[Unread]]:
+    """Number the claims; those too unsure to use become unread candidates."""
+    settled: list[Antenna] = []
+    doubtful: list[Unread] = []
+    count = 0
+    for antenna in antennas:
+        kept: list[Claim] = []
+        for claim in antenna.claims:
+            if claim.confidence < USED_FROM:
+                place = claim.evidence[0]
+                doubtful.append(
+                    Unread(place.text, "low-confidence", place.page, place.bbox,
+                           claim.quantity, antenna.label)  # fmt: skip
+                )
+                continue
+            count += 1
+            kept.append(replace(claim, id=f"c{count}"))
+        if kept:
+            settled.append(replace(antenna, claims=tuple(kept)))
+    return settled, doubtful
+
+
+def _named(unread: list[Unread]) -> list[Unread]:
+    seen: dict[tuple[object, ...], Unread] = defaultdict()
+    for item in unread:
+        seen.setdefault((item.text, item.page, item.bbox), item)
+    return list(seen.values())

@@ -1,0 +1,55 @@
+"""How sure a claim is: a logistic sum of plain yes/no facts about how it was read.
+
+The weights were fitted on invented sheets with noise (see DEVELOPERS.md for the reliability
+table). They are data: one line per fact.
+"""
+
+from __future__ import annotations
+
+import math
+
+from specs.claims import Quantity
+
+USED_FROM = 0.5
+"""Claims below this confidence are shown as unread candidates and not used by rules."""
+
+WEIGHTS: dict[str, float] = {
+    "base": 1.6,
+    "labelled": 1.4,
+    "from prose": -1.2,
+    "unlabelled frequency": -1.8,
+    "usual range": 1.2,
+    "unusual range": -3.2,
+    "unit printed": 0.6,
+    "unit missing": -1.0,
+    "repeated": 0.8,
+    "company of known labels": 0.6,
+    "long text": -0.8,
+    "many numbers": -0.6,
+    "misspelt label": -0.5,
+    "below a head": -0.3,
+    "hidden": -2.5,
+    "read by recognition": -0.6,
+}
+
+USUAL: dict[Quantity, tuple[float, float]] = {
+    Quantity.GAIN: (-25.0, 65.0),
+    Quantity.DIRECTIVITY: (0.0, 70.0),
+    Quantity.EFFICIENCY: (1.0, 100.0),
+    Quantity.BEAMWIDTH: (0.2, 360.0),
+    Quantity.FREQUENCY: (0.1, 300_000.0),
+    Quantity.VSWR: (1.0, 12.0),
+    Quantity.RETURN_LOSS: (-45.0, 45.0),
+    Quantity.FRONT_TO_BACK: (0.5, 80.0),
+}
+"""The ordinary range of a figure, in its normal unit (common practice, no source)."""
+
+
+def confidence(facts: frozenset[str]) -> float:
+    """The probability that a claim with these facts is right.
+
+    >>> confidence(frozenset({"labelled", "usual range", "unit printed"})) > 0.95
+    True
+    """
+    total = WEIGHTS["base"] + sum(WEIGHTS[fact] for fact in facts)
+    return round(1 / (1 + math.exp(-total)), 3)
