@@ -19,21 +19,19 @@ _AMPLIFIER = re.compile(
     r"放大器|低噪|増幅|증폭", re.IGNORECASE,
 )  # fmt: skip
 _ANTENNA_HEADING = re.compile(
-    r"^(?:\d+[.)]?\s*)?(?:passive |the )?(?:antenna|element|radiat|patch|mechanic|environment|general|"
-    r"cable|physical|strahler|antenne|antena|天线|机械|環境|环境|アンテナ)", re.IGNORECASE,
+    r"^(?:\d+[.)]?\s*)?(?:passive |the )?(?:antenna|element|radiat|patch|mechanic|environment|"
+    r"general|cable|physical|strahler|antenne|antena|天线|机械|環境|环境|アンテナ)", re.IGNORECASE,
 )  # fmt: skip
 _COMPANY = re.compile(
-    r"noise figure|rauschzahl|rauschmaß|噪声|雑音|잡음|noise factor|figura de ruido|facteur de bruit|"
-    r"supply voltage|dc voltage|operating voltage|voltage|spannung|工作电压|电压|電圧|전압|\bvdc\b|"
+    r"noise figure|rauschzahl|rauschmaß|噪声|雑音|잡음|noise factor|figura de ruido|"
+    r"facteur de bruit|supply voltage|dc voltage|operating voltage|voltage|spannung|工作电压|电压|電圧|전압|\bvdc\b|"
     r"current|stromaufnahme|电流|電流|\bma\b", re.IGNORECASE,
 )  # fmt: skip
 
 
 def under_amplifier(record: Record, boxes: list[Box]) -> set[int]:
     """Identities of the rows of a record whose figures stand under an amplifier heading."""
-    headings = sorted(
-        (b for b in boxes if _is_heading(b)), key=lambda b: (round(b.x0 / 40), b.top)
-    )
+    headings = sorted((b for b in boxes if _is_heading(b)), key=lambda b: (round(b.x0 / 40), b.top))
     found: set[int] = set()
     for row in record.rows:
         above = [h for h in headings if _heads(h, row.pair.box)]

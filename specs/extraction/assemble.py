@@ -6,7 +6,8 @@ from collections import defaultdict
 from dataclasses import replace
 from statistics import median
 
-from specs.claims import Antenna, Claim, Quantity, Sheet, Unread
+from specs.claims import Antenna, Claim, Evidence, Quantity, Sheet, Stated, Unread
+from specs.claims.normalize import DEFAULT_UNIT, normalize
 from specs.claims.traits import antenna_type, traits_of
 from specs.extraction.claims_of import Draft, Surroundings, read_record
 from specs.extraction.confidence import USED_FROM, confidence
@@ -15,7 +16,7 @@ from specs.extraction.lines import segments
 from specs.extraction.pairing import Pair, pairs
 from specs.extraction.prose import Mention, mentions
 from specs.extraction.records import Record, records
-from specs.extraction.tables import Box, boxes
+from specs.extraction.tables import boxes
 from specs.reading.document import Document, Page
 
 
@@ -62,14 +63,16 @@ class _Page:
 
     def surroundings(self, positioning: bool) -> Surroundings:
         return Surroundings(
-            self.page.number, self.boxes, self.names, positioning, self.page.read_by
+            self.page.number, self.boxes, self.names, self.values(), positioning, self.page.read_by
         )
+
+    def values(self) -> set[int]:
+        """Identities of the boxes that are values of a label."""
+        return {id(b) for p in self.pairs for v in p.values for b in v.boxes if not v.inline}
 
     def used(self) -> set[int]:
         """Identities of the boxes that pairs have used."""
-        return {id(b) for p in self.pairs for v in p.values for b in v.boxes} | {
-            id(p.box) for p in self.pairs
-        }
+        return self.values() | {id(p.box) for p in self.pairs}
 
     def title_size(self) -> float:
         sizes = [b.size for b in self.boxes]
@@ -107,7 +110,9 @@ def _antennas(record: Record, drafts: list[Draft], page: _Page) -> list[Antenna]
         label = record.name or _model_of(record) or (names[0] if len(names) == 1 else "") or title
         return [_antenna(label, drafts, record, page)]
     return [
-        _antenna(name, [d for d in drafts if d.name == name or d.name not in variants], record, page)
+        _antenna(
+            name, [d for d in drafts if d.name == name or d.name not in variants], record, page
+        )
         for name in variants
     ]
 
@@ -126,7 +131,12 @@ def _antenna(label: str, drafts: list[Draft], record: Record, page: _Page) -> An
     claims = _merged(drafts)
     words = " ".join(
         [page.title(), record.name or "", label]
-        + [r.pair.label.text + " " + v.text for r in record.rows for v in r.values if len(v.text) < 60]
+        + [
+            r.pair.label.text + " " + v.text
+            for r in record.rows
+            for v in r.values
+            if len(v.text) < 60
+        ]
     )
     short = " ".join(b.text for b in page.boxes if len(b.text) < 60)
     found = antenna_type(page.title()) or antenna_type(words)
@@ -189,8 +199,70 @@ def _joined(antennas: list[Antenna]) -> list[Antenna]:
 def _with_mentions(
     antennas: list[Antenna], loose: list[tuple[int, Mention]], document: Document
 ) -> list[Antenna]:
-    """Figures of titles go to the headline; those of prose fill what no label states."""
-    return antennas
+    """Figures of titles go to the headline; those of prose fill what no label states.
+
+    A mention that repeats a claim is one more evidence of it. With several antennas on a sheet,
+    running text cannot be tied to one of them.
+    """
+    if len(antennas) > 1:
+        return antennas
+    if not antennas:
+        prose = [_mentioned(page, m) for page, m in loose if m.reading.unit]
+        label = document.title or document.name
+        return [Antenna(label, tuple(_merged(prose)))] if prose else []
+    antenna = antennas[0]
+    claims = list(antenna.claims)
+    headline: list[Claim] = []
+    for page, mention in loose:
+        draft = _mentioned(page, mention)
+        index = next((i for i, c in enumerate(claims) if _says_same(c, draft.claim)), None)
+        if index is not None:
+            known = claims[index]
+            claims[index] = replace(known, evidence=known.evidence + draft.claim.evidence)
+        elif mention.title:
+            headline.append(draft.claim)
+        elif not any(_rivals(c, draft.claim) for c in claims):
+            claims.append(draft.claim)
+    return [replace(antenna, claims=tuple(claims), headline=tuple(headline))]
+
+
+def _mentioned(page: int, mention: Mention) -> Draft:
+    reading = mention.reading
+    stated = Stated(
+        text=mention.box.printed,
+        low=reading.figure.low,
+        high=reading.figure.high,
+        relation=reading.relation,
+        tolerance=reading.figure.tolerance,
+        unit=reading.unit or DEFAULT_UNIT.get(reading.quantity, ""),
+        half_step=reading.figure.half_step,
+    )
+    facts = frozenset({"from prose", "usual range", "unit printed"})
+    claim = Claim(
+        id="",
+        quantity=reading.quantity,
+        stated=stated,
+        normalized=normalize(reading.quantity, stated, reading.statistic),
+        statistic=reading.statistic,
+        plane=reading.plane,
+        evidence=(Evidence(page, mention.box.text_box, mention.box.printed),),
+        confidence=confidence(facts),
+    )
+    return Draft(claim, None, facts)
+
+
+def _says_same(a: Claim, b: Claim) -> bool:
+    """Same quantity and figure, in the same plane as far as both say."""
+    return (
+        a.quantity is b.quantity
+        and abs(a.normalized.nominal - b.normalized.nominal) < 1e-6
+        and (a.plane is b.plane or a.plane is None or b.plane is None)
+    )
+
+
+def _rivals(a: Claim, b: Claim) -> bool:
+    """Both state the quantity, in the same plane."""
+    return a.quantity is b.quantity and (a.plane is b.plane or b.plane is None)
 
 
 def _settle(antennas: list[Antenna]) -> tuple[list[Antenna], list[Unread]]:
@@ -204,8 +276,14 @@ def _settle(antennas: list[Antenna]) -> tuple[list[Antenna], list[Unread]]:
             if claim.confidence < USED_FROM:
                 place = claim.evidence[0]
                 doubtful.append(
-                    Unread(place.text, "low-confidence", place.page, place.bbox,
-                           claim.quantity, antenna.label)  # fmt: skip
+                    Unread(
+                        place.text,
+                        "low-confidence",
+                        place.page,
+                        place.bbox,
+                        claim.quantity,
+                        antenna.label,
+                    )
                 )
                 continue
             count += 1

@@ -51,42 +51,38 @@ def add_frequency(bands: Bands, value: Value, readings: list[Reading]) -> None:
 
 def band_of(
     reading: Reading, pair: Pair, value: Value, head: Head, bands: Bands, record: Record
-) -> tuple[Band | None, str]:
-    """The band a reading holds for, and the kind of evidence that says so."""
+) -> Band | None:
+    """The band a reading holds for; None when the sheet does not say."""
     if reading.band is not None:
-        return reading.band, "value"
+        return reading.band
     for text in (value.band_text, pair.label.band_text):
         if text and (band := union_of(text)) is not None:
-            return band, "cell"
+            return band
     if head.band is not None:
-        return head.band, "head"
+        return head.band
     if value.columns > 1 or bands.columns:
-        column = _column(value.boxes[0], bands)
-        if column is not None:
-            return column
+        over = _over_box(value.boxes[0], bands)
+        if over:
+            # a value over all columns holds for all of them: no band of its own
+            whole = len(over) == len(bands.columns) > 1
+            return None if whole else (min(b[0] for b in over), max(b[1] for b in over))
     if value.below and record.sampled:
-        row = next((b for box, b in bands.rows if _same_row(box, value.boxes[0])), None)
-        return row, "row"
+        return next((b for box, b in bands.rows if _same_row(box, value.boxes[0])), None)
     if reading.named_band and len(bands.all) in (2, 3):
         index = _NAMED[reading.named_band]
         if not (len(bands.all) == 2 and index == 1):
-            return bands.all[index], "name"
+            return bands.all[index]
     for listed in bands.listed:
         if reading.places == len(listed) > 1:
-            return listed[reading.place], "list"
+            return listed[reading.place]
     if len(bands.all) == 1:
-        return bands.all[0], "record"
-    return None, "none"
+        return bands.all[0]
+    return None
 
 
-def _column(box: Box, bands: Bands) -> tuple[Band | None, str] | None:
-    """The union of the frequency columns over (or under) a box; none where it spans them all."""
-    over = [b for head, b in bands.columns if _over(head, box)]
-    if not over:
-        return None
-    if len(over) == len(bands.columns) and len(over) > 1:
-        return None, "all"
-    return (min(b[0] for b in over), max(b[1] for b in over)), "column"
+def _over_box(box: Box, bands: Bands) -> list[Band]:
+    """The bands of the frequency columns over (or under) a box."""
+    return [band for head, band in bands.columns if _over(head, box)]
 
 
 def _over(head: Box, box: Box) -> bool:
@@ -97,8 +93,6 @@ def _over(head: Box, box: Box) -> bool:
 def _same_row(a: Box, b: Box) -> bool:
     top, bottom = max(a.top, b.top), min(a.bottom, b.bottom)
     return bottom - top >= 0.5 * min(a.bottom - a.top, b.bottom - b.top)
-
-
 
 
 def is_sample_list(readings: list[Reading]) -> bool:

@@ -5,7 +5,7 @@ from __future__ import annotations
 import re
 from dataclasses import dataclass, field, replace
 
-from specs.claims import BBox, Band, Claim, Evidence, Quantity, Relation, Stated, Unread
+from specs.claims import Band, BBox, Claim, Evidence, Quantity, Relation, Stated, Unread
 from specs.claims.normalize import DEFAULT_UNIT, normalize, stated_from
 from specs.errors import UnitsError
 from specs.extraction.amplifier import amplifier_row, suspicious, under_amplifier
@@ -50,6 +50,7 @@ class Surroundings:
     page: int
     boxes: list[Box]
     names: dict[int, str]
+    used: set[int]
     positioning: bool
     read_by: str
 
@@ -64,7 +65,7 @@ def read_record(record: Record, around: Surroundings) -> Found:
     readings: dict[int, list[Reading]] = {}
     for row in record.rows:
         for value in row.values:
-            head = head_of(row.pair, value, around.boxes, around.names)
+            head = head_of(row.pair, value, around.boxes, around.names, around.used)
             heads[id(value)] = head
             unit = row.pair.unit or head.unit
             readings[id(value)] = read_values(row.pair.label, value.text, unit)
@@ -100,9 +101,7 @@ def _is_band_row(pair: Pair, readings: list[Reading]) -> bool:
     return bool(readings) and all(r.figure.low < r.figure.high for r in readings)
 
 
-def _join_min_max(
-    row: Row, heads: dict[int, Head], readings: dict[int, list[Reading]]
-) -> None:
+def _join_min_max(row: Row, heads: dict[int, Head], readings: dict[int, list[Reading]]) -> None:
     """MIN 2300 and MAX 2390 of a frequency are one band."""
     by_statistic = {
         head.statistic.value: value
@@ -121,9 +120,8 @@ def _join_min_max(
         high=high.figure.high,
         relation=Relation.RANGE,
     )
-    joined = replace(
-        low, figure=figure, relation=Relation.RANGE, band=(low.band[0], high.band[1]), statistic=None
-    )
+    joined = replace(low, figure=figure, relation=Relation.RANGE, band=(low.band[0], high.band[1]))
+    heads[id(low_value)] = replace(heads[id(low_value)], statistic=None)
     readings[id(low_value)] = [joined]
     low_value.boxes = [*low_value.boxes, *high_value.boxes]
     low_value.columns = 1
@@ -189,10 +187,12 @@ def _figures(
         if suspicious(record, reading.quantity, reading.figure.low, around.positioning):
             found.unread.append(_unread(value.boxes[0], "amplifier", around.page, Quantity.GAIN))
             continue
-        band, how = band_of(reading, row.pair, value, head, bands, record)
-        claim, claim_facts = _claim(row, value, head, reading, band, how, around, facts)
+        band = band_of(reading, row.pair, value, head, bands, record)
+        claim, claim_facts = _claim(row, value, head, reading, band, around, facts)
         if claim is None:
-            found.unread.append(_unread(value.boxes[0], "not-a-figure", around.page, label.quantity))
+            found.unread.append(
+                _unread(value.boxes[0], "not-a-figure", around.page, label.quantity)
+            )
             continue
         drafts.append(Draft(claim, _variant(reading, head, row), claim_facts))
     if not readings and re.search(r"\d", value.text) and not value.below:
@@ -211,7 +211,7 @@ def _frequency_claims(
 ) -> list[Draft]:
     if not _is_band_row(row.pair, readings):
         if row.pair.label.quantity is Quantity.BANDWIDTH:
-            made = [_claim(row, value, head, r, None, "none", around, facts) for r in readings]
+            made = [_claim(row, value, head, r, None, around, facts) for r in readings]
             return [Draft(c, head.name, f) for c, f in made if c is not None]
         return []
     spots = [r for r in readings if r.band and r.band[0] == r.band[1]]
@@ -222,7 +222,7 @@ def _frequency_claims(
     drafts = []
     for reading in readings:
         as_frequency = replace(reading, quantity=Quantity.FREQUENCY)
-        claim, claim_facts = _claim(row, value, head, as_frequency, None, "none", around, facts)
+        claim, claim_facts = _claim(row, value, head, as_frequency, None, around, facts)
         if claim is not None:
             drafts.append(Draft(claim, _variant(reading, head, row), claim_facts))
     return drafts
@@ -238,7 +238,6 @@ def _claim(
     head: Head,
     reading: Reading,
     band: Band | None,
-    how: str,
     around: Surroundings,
     facts: frozenset[str],
 ) -> tuple[Claim | None, frozenset[str]]:
@@ -332,6 +331,10 @@ def _set_aside(row: Row, around: Surroundings, found: Found) -> None:
     quantity = row.pair.label.quantity or Quantity.GAIN
     for value in row.values:
         if re.search(r"\d", value.text):
-            text = f"{row.pair.box.printed} {_printed(value)}" if not value.inline else row.pair.box.printed
+            text = (
+                f"{row.pair.box.printed} {_printed(value)}"
+                if not value.inline
+                else row.pair.box.printed
+            )
             box = _around([row.pair.box.text_box, *(b.text_box for b in value.boxes)])
             found.unread.append(Unread(text, "amplifier", around.page, box, quantity))

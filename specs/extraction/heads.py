@@ -29,9 +29,13 @@ class Head:
     name: str | None = None
 
 
-def head_of(pair: Pair, value: Value, above: list[Box], names: dict[int, str]) -> Head:
-    """The heads over a value. ``above`` are all boxes of the page from the top; ``names`` the
-    model names known by the identity of their box.
+def head_of(
+    pair: Pair, value: Value, above: list[Box], names: dict[int, str], used: set[int]
+) -> Head:
+    """The heads over a value.
+
+    ``above`` are all boxes of the page from the top, ``names`` the model names and ``used`` the
+    values of labels, both by the identity of their box. A value of another label is no head.
     """
     head = Head()
     box = value.boxes[0]
@@ -41,6 +45,8 @@ def head_of(pair: Pair, value: Value, above: list[Box], names: dict[int, str]) -
     for other in reversed(column[-_MOST_ROWS:]):
         if id(other) in names:
             head.name = head.name or names[id(other)]
+            continue
+        if id(other) in used:
             continue
         if not other.ruled and other.x0 <= left + 1 and other.x1 >= box.x0:
             break

@@ -100,7 +100,7 @@ def _walk(text: str, lowered: str, draft: _Draft) -> int:
             at += 1
             continue
         following = (
-            _parenthesis(text, lowered, at, draft)
+            _parenthesis(text, at, draft)
             or _level(lowered, at, draft)
             or _phrase(lowered, at, draft)
             or _unit_tail(text, at, draft)
@@ -111,8 +111,9 @@ def _walk(text: str, lowered: str, draft: _Draft) -> int:
             continue
         separator = _SEPARATOR.match(text, at) or _spaced_dash(text, at)
         if separator and draft.has_head() and not _continues(lowered, at, draft):
-            if _unit_tail(text, separator.end(), draft) is not None and text[at] != ":":
-                at = _after_unit(text, separator.end())
+            unit_end = _unit_tail(text, separator.end(), draft) if text[at] != ":" else None
+            if unit_end is not None:
+                at = unit_end
                 continue
             draft.separated = True
             return separator.end()
@@ -121,8 +122,9 @@ def _walk(text: str, lowered: str, draft: _Draft) -> int:
             if _continues(lowered, at, draft):
                 at = connector.end()
                 continue
-            if draft.has_head() and _unit_tail(text, connector.end(), draft) is not None:
-                at = _after_unit(text, connector.end())
+            unit_end = _unit_tail(text, connector.end(), draft)
+            if unit_end is not None:
+                at = unit_end
                 continue
         letter = _LETTER_PLANE.match(text, at)
         if letter and draft.quantity_so_far() == "beamwidth" and letter.end() > at:
@@ -175,7 +177,7 @@ def _level(lowered: str, at: int, draft: _Draft) -> int | None:
     return match.end()
 
 
-def _parenthesis(text: str, lowered: str, at: int, draft: _Draft) -> int | None:
+def _parenthesis(text: str, at: int, draft: _Draft) -> int | None:
     if text[at] not in "([":
         return None
     close = text.find(")" if text[at] == "(" else "]", at)

@@ -9,6 +9,7 @@ from __future__ import annotations
 
 from bisect import bisect_left
 from dataclasses import dataclass
+from itertools import pairwise
 
 from specs.claims import BBox
 from specs.reading.document import Page, Word
@@ -50,7 +51,7 @@ def segments(page: Page) -> list[Segment]:
     xs = [v[0] for v in verticals]
     for line in _lines(page.words):
         current: list[Word] = [line[0]]
-        for before, word in zip(line, line[1:], strict=False):
+        for before, word in pairwise(line):
             if _gap(before, word) or _ruled(before, word, verticals, xs):
                 found.append(segment_of(current))
                 current = []
@@ -62,7 +63,7 @@ def segments(page: Page) -> list[Segment]:
 def segment_of(words: list[Word]) -> Segment:
     """One segment of neighbouring words."""
     printed = words[0].text
-    for before, word in zip(words, words[1:], strict=False):
+    for before, word in pairwise(words):
         # Two words that touch are one word set in two pieces (a change of font, a raised sign).
         glued = word.x0 - before.x1 < 0.06 * max(word.size, before.size)
         printed += word.text if glued else " " + word.text

@@ -14,6 +14,7 @@ from dataclasses import dataclass, field
 from specs.claims import Quantity
 from specs.extraction.labels import Label
 from specs.extraction.tables import Box
+from specs.extraction.values import UNITS
 from specs.extraction.vocabulary import phrase_at
 from specs.units.figures import find_figures
 from specs.units.spellings import measures, unit_of, unit_pattern
@@ -52,8 +53,9 @@ def pairs(boxes: list[Box]) -> list[Pair]:
     labelled = [b for b in boxes if b.label is not None]
     taken: set[int] = set()
     nested: set[int] = set()
-    found = [_pair_right(box, boxes, taken, nested) for box in labelled]
+    found = [_pair_right(box, boxes, nested) for box in labelled]
     found = [pair for pair in found if id(pair.box) not in nested]
+    taken.update(id(b) for p in found for v in p.values for b in v.boxes if not v.inline)
     _extend_stacks(found, boxes, taken)
     for pair in found:
         if not pair.values and not pair.label.rest:
@@ -115,119 +117,160 @@ def _nested(label: Label, other: Box) -> bool:
     return inner is not None and inner.quantity is label.quantity is not None and bool(inner.rest)
 
 
-def _pair_right(box: Box, boxes: list[Box], taken: set[int], nested: set[int]) -> Pair:
+def _pair_right(box: Box, boxes: list[Box], nested: set[int]) -> Pair:
     label = box.label
     assert label is not None
     pair = Pair(label, box)
     if label.rest:
         pair.values.append(Value(label.rest, [box], inline=True))
         return pair
-    row = [b for b in boxes if b is not box and b.x0 >= _right_edge(box) - 1 and overlap(box, b)]
-    row.sort(key=lambda b: (b.x0, b.top))
+    right = [b for b in boxes if b is not box and b.x0 >= _right_edge(box) - 1 and overlap(box, b)]
+    for row in _sub_rows(right):
+        if not _walk_row(pair, row, nested):
+            break
+    return pair
+
+
+def _sub_rows(right: list[Box]) -> list[list[Box]]:
+    """The boxes beside a tall label, row by row, each from left to right."""
+    rows: list[list[Box]] = []
+    for box in sorted(right, key=lambda b: b.text_box[1]):
+        home = next((r for r in rows if overlap(r[0], box) and not _stacked_in(r, box)), None)
+        if home is None:
+            rows.append([box])
+        else:
+            home.append(box)
+    for row in rows:
+        row.sort(key=lambda b: b.x0)
+    return rows
+
+
+def _stacked_in(row: list[Box], box: Box) -> bool:
+    """A box under another of the same column starts a new row."""
+    return any(same_column(b, box) and b.text_box[3] <= box.text_box[1] + 1 for b in row)
+
+
+def _walk_row(pair: Pair, row: list[Box], nested: set[int]) -> bool:
+    """Walk one row to the right of a label; False when the row begins with another label."""
+    label = pair.label
     columns: list[list[Box]] = []
     band_text: str | None = None
+    prefix: list[Box] = []
     for other in row:
         if _is_barrier(other):
             if columns or not _nested(label, other):
                 break
             nested.add(id(other))
-        unit = only_unit(other.text)
-        if unit is not None:
+        if (unit := only_unit(other.text)) is not None:
             pair.unit = pair.unit or unit
-            continue
-        if not columns and label.quantity not in (Quantity.FREQUENCY, Quantity.BANDWIDTH, None):
-            if only_band(other.text):
-                band_text = other.text
-                continue
-            if _words_only(other) and label.quantity is not Quantity.POLARIZATION:
-                continue
-        if columns and _new_subject(other):
+        elif not columns and _is_condition(label, other):
+            band_text = other.text
+        # a sub-label or a name between label and value: 'Horizontal', 'A'
+        elif not columns and not re.search(r"\d", other.text) and label.quantity in UNITS:
+            prefix.append(other)
+        elif columns and _new_subject(other):
             break
-        if columns and other.text.lstrip().startswith("±"):
+        elif columns and other.text.lstrip().startswith("±"):
             columns[-1].append(other)
-            continue
-        if columns and _same_stack(columns[-1][-1], other):
-            columns[-1].append(other)
-            continue
-        columns.append([other])
-    _keep_on_baseline(box, columns)
+        else:
+            columns.append([other])
+    if not columns and band_text is not None and label.quantity is Quantity.GAIN:
+        return True
     for index, column in enumerate(columns):
-        column.sort(key=lambda b: b.top)
-        text = " ".join(b.text for b in column)
-        pair.values.append(Value(text, column, index, len(columns), band_text=band_text))
-        taken.update(id(b) for b in column)
-    return pair
+        boxes = [*prefix, *column] if index == 0 else column
+        text = " ".join(b.text for b in boxes)
+        pair.values.append(Value(text, boxes, index, len(columns), band_text=band_text))
+    return bool(columns) or not row or not _is_barrier(row[0])
+
+
+def _is_condition(label: Label, other: Box) -> bool:
+    """A cell of frequencies between a label and its value."""
+    return label.quantity not in (
+        Quantity.FREQUENCY, Quantity.BANDWIDTH, None,
+    ) and only_band(other.text)  # fmt: skip
 
 
 def _extend_stacks(found: list[Pair], boxes: list[Box], taken: set[int]) -> None:
-    """Lines of a stack beside one label: down, and up when the label stands at their middle."""
+    """Rows that go on beside one label: down, and up when the label stands at their middle."""
     labels = [p.box for p in found]
+    free = [b for b in boxes if not b.ruled]
     for pair in found:
         if not pair.values or pair.values[0].inline or pair.box.ruled:
             continue
-        for value in pair.values:
-            for direction in (1, -1):
-                _extend(pair, value, direction, boxes, labels, taken)
-            value.boxes.sort(key=lambda b: b.top)
-            value.text = " ; ".join(b.text for b in value.boxes)
+        for direction in (1, -1):
+            _extend(pair, direction, free, labels, taken)
 
 
 def _extend(
-    pair: Pair, value: Value, direction: int, boxes: list[Box], labels: list[Box], taken: set[int]
+    pair: Pair, direction: int, free: list[Box], labels: list[Box], taken: set[int]
 ) -> None:
-    edge = value.boxes[-1 if direction > 0 else 0]
-    if edge.ruled or edge.label is not None and edge is pair.box:
+    edge = pair.values[-1 if direction > 0 else 0].boxes[0]
+    left = min(v.boxes[0].x0 for v in pair.values)
+    if edge.ruled:
         return
     step = 1.7 * edge.lines[0].height
-    free = [b for b in boxes if not b.ruled and id(b) not in taken and abs(b.x0 - edge.x0) < b.size]
     while True:
-        beyond = [b for b in free if 0 < direction * (b.top - edge.top) <= step]
-        beyond = [b for b in beyond if not any(overlap(b, la) and la.x1 <= b.x0 for la in labels)]
+        beyond = [b for b in free if 0.5 < direction * (b.top - edge.top) <= step
+                  and b.x0 > _right_edge(pair.box) - 1 and id(b) not in taken]  # fmt: skip
         if not beyond:
             return
-        following = min(beyond, key=lambda b: abs(b.top - edge.top))
-        if following.label is not None and not _nested(pair.label, following):
+        nearest = min(beyond, key=lambda b: abs(b.top - edge.top))
+        row = sorted((b for b in beyond if overlap(b, nearest)), key=lambda b: b.x0)
+        if any(overlap(b, la) and la.x0 < b.x0 for b in row[:1] for la in labels):
             return
-        if not _stackable(following.text):
+        if row[0].x0 > left + row[0].size * 12 or not _goes_on(pair, row):
             return
-        value.boxes.append(following)
-        taken.add(id(following))
-        edge = following
+        before = len(pair.values)
+        if not _walk_row(pair, row, set()) or len(pair.values) == before:
+            return
+        added = pair.values[before:]
+        del pair.values[before:]
+        taken.update(id(b) for v in added for b in v.boxes)
+        _join_row(pair, added, direction)
+        edge = row[0]
 
 
-def _stackable(text: str) -> bool:
-    """Only values with letters or units extend a stack: bare numbers are leftovers."""
-    return bool(re.search(r"\d", text) and re.search(r"[^\W\d_]|[°%@]", text))
+def _goes_on(pair: Pair, row: list[Box]) -> bool:
+    """Whether a row without a label can belong to the label above (or below) it.
+
+    Bare numbers are leftovers of other rows; only values with letters or units go on.
+    """
+    first = row[0]
+    if first.label is not None and not _nested(pair.label, first):
+        return False
+    aligned = any(abs(b.x0 - v.boxes[0].x0) < b.size for b in row for v in pair.values) or (
+        len(row) > 1 and only_band(first.text)
+    )
+    text = " ".join(b.text for b in row)
+    return aligned and bool(re.search(r"\d", text) and re.search(r"[^\W\d_]|[°%@]", text))
+
+
+def _join_row(pair: Pair, added: list[Value], direction: int) -> None:
+    """A further line of a value joins its text; a row with its own condition stands alone."""
+    single = len(added) == 1 and len(pair.values) == 1
+    if single and added[0].band_text is None and pair.values[0].band_text is None:
+        value, more = pair.values[0], added[0]
+        parts = [value, more] if direction > 0 else [more, value]
+        value.text = _joined(parts[0].text, parts[1].text)
+        value.boxes = [*parts[0].boxes, *parts[1].boxes]
+    elif direction > 0:
+        pair.values.extend(added)
+    else:
+        pair.values[:0] = added
+
+
+def _joined(first: str, second: str) -> str:
+    """Two lines of one value: a broken list goes on, else each line is an item."""
+    if re.search(r"[-~/,;&]\s*$", first) or re.match(r"\s*[-~/,;&]", second):
+        return f"{first} {second}"
+    return f"{first} ; {second}"
 
 
 def _right_edge(box: Box) -> float:
     return box.x1 if box.ruled else box.text_box[2]
 
 
-def _same_stack(above: Box, below: Box) -> bool:
-    """Two free lines of one value, one under the other."""
-    return same_column(above, below) and abs(above.x0 - below.x0) < 0.5 * above.size
-
-
-def _keep_on_baseline(label: Box, columns: list[list[Box]]) -> None:
-    """Where two free boxes compete for one column, the one on the label's baseline stays."""
-    for column in columns:
-        if len(column) < 2:
-            continue
-        bare = [b for b in column if re.fullmatch(r"[\d.,\s]+", b.text)]
-        if bare and len(bare) < len(column):
-            for box in bare:
-                column.remove(box)
-
-
 _WORD = re.compile(r"[^\W\d_]{5,}")
-
-
-def _words_only(box: Box) -> bool:
-    """A sub-label between label and value: words of the vocabulary without a figure."""
-    if re.search(r"\d", box.text):
-        return False
-    return phrase_at(box.text.lower(), 0) is not None
 
 
 def _new_subject(box: Box) -> bool:
@@ -244,7 +287,8 @@ def _pair_below(pair: Pair, boxes: list[Box], labelled: list[Box], taken: set[in
     if following and following[0].text.lstrip().startswith(":"):
         pair.values.append(Value(following[0].text.lstrip(" :"), [following[0]]))
         return
-    in_row = [b for b in labelled if b is not box and overlap(box, b) and not (b.label and b.label.rest)]
+    bare = [b for b in labelled if b.label and not b.label.rest]
+    in_row = [b for b in bare if b is not box and overlap(box, b)]
     ruled_below = bool(following) and box.ruled and following[0].ruled
     if len(in_row) < 1 and not ruled_below:
         return

@@ -16,18 +16,24 @@ from specs.extraction.tables import Box
 from specs.extraction.values import Reading, read_values
 
 _REJECT = re.compile(
-    r"\bloss|noise|amplif|\blna\b|lower|higher|more than|less than|\berp\b|eirp|=\s*\d|improve|increase|"
-    r"reduc|compar|versus|\bvs\b|exceed|degrad|other|optional|accessor|related|instead|relative to|"
-    r"limit|example|table|figure|below|theor|formula|typically between|difference|would|ideal|isotropic",
+    r"\bloss|noise|amplif|\blna\b|lower|higher|more than|less than|\berp\b|eirp|=\s*\d|improve|"
+    r"increase|reduc|compar|versus|\bvs\b|exceed|degrad|other|optional|accessor|related|instead|"
+    r"relative to|limit|example|table|figure|below|theor|formula|typically between|difference|would|ideal|"
+    r"isotropic",
     re.IGNORECASE,
 )
 _GAIN = re.compile(
-    r"(?P<figure>(?<![\w.,-])[-+]?\d+(?:[.,]\d+)?\s?(?:(?:-|~|to|/)\s?\d+(?:[.,]\d+)?\s?)?dB(?:i|d|ic)\b)", re.IGNORECASE
+    r"(?P<figure>(?<![\w.,-])[-+]?\d+(?:[.,]\d+)?\s?(?:(?:-|~|to|/)\s?\d+(?:[.,]\d+)?\s?)?dB(?:i|d|ic)\b)",
+    re.IGNORECASE,
 )
 _GAIN_DB = re.compile(
-    r"(?:gain|gewinn|ganancia|guadagno|ganho)\s+(?:\w+\s+){0,2}?(?P<figure>\d+(?:[.,]\d+)?\s?dB)\b", re.IGNORECASE
+    r"(?:gain|gewinn|ganancia|guadagno|ganho)\s+(?:\w+\s+){0,2}?(?P<figure>\d+(?:[.,]\d+)?\s?dB)\b",
+    re.IGNORECASE,
 )
-_VSWR = re.compile(r"vswr\s+(?:of\s+|is\s+|under\s+|below\s+)?(?P<figure>(?:<=?\s?)?\d(?:\.\d+)?(?:\s?:\s?1)?)", re.IGNORECASE)
+_VSWR = re.compile(
+    r"vswr\s+(?:of\s+|is\s+|under\s+|below\s+)?(?P<figure>(?:<=?\s?)?\d(?:\.\d+)?(?:\s?:\s?1)?)",
+    re.IGNORECASE,
+)
 _BEAM = re.compile(
     r"(?P<figure>\d+(?:[.,]\d+)?\s?(?:°|deg(?:ree)?s?)\s*)(?:(?P<plane>horizontal|azimuth|vertical|elevation|"
     r"(?:e|h)-plane)\s+)?(?:half[- ]power\s+|3\s?db\s+)?beam\s?-?width", re.IGNORECASE,

@@ -25,7 +25,7 @@ class Row:
 
 @dataclass(slots=True, eq=False)
 class Record:
-    """The rows of one antenna (or of several that share them), with its name when one is printed."""
+    """The rows of one antenna, or of several that share them; its name when one is printed."""
 
     page: int
     rows: list[Row] = field(default_factory=list)
@@ -184,9 +184,7 @@ def _rows_of_table(page: int, table: list[Pair], boxes: list[Box]) -> list[Recor
     return [record]
 
 
-def _name_of(
-    line: list[tuple[Pair, Value]], models: Pair | None, boxes: list[Box]
-) -> str | None:
+def _name_of(line: list[tuple[Pair, Value]], models: Pair | None, boxes: list[Box]) -> str | None:
     for pair, value in line:
         if pair is models:
             return value.boxes[0].printed.strip()

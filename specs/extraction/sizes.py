@@ -9,9 +9,10 @@ from specs.extraction.labels import Label
 from specs.units.figures import Figure, find_figures
 from specs.units.spellings import measures
 
-_ORDER = re.compile(r"\(?\s*([lwhdtbø])(?:ength|idth|eight|epth|ia\.?|iameter)?\s*[x*/]\s*"
-                    r"([lwhdtbø])(?:ength|idth|eight|epth|ia\.?|iameter)?(?:\s*[x*/]\s*"
-                    r"([lwhdtbø])(?:ength|idth|eight|epth|ia\.?|iameter)?)?", re.IGNORECASE)  # fmt: skip
+_INITIAL = r"([lwhdtbø])(?:ength|idth|eight|epth|ia\.?|iameter)?"
+_ORDER = re.compile(
+    rf"\(?\s*{_INITIAL}\s*[x*/]\s*{_INITIAL}(?:\s*[x*/]\s*{_INITIAL})?", re.IGNORECASE
+)
 _NAMES = {"l": "length", "w": "width", "b": "width", "h": "height", "d": "depth", "t": "depth",
           "ø": "diameter"}  # fmt: skip
 _DIAMETER = re.compile(r"ø|\bdia\b|\bdiam|\bd\b", re.IGNORECASE)
@@ -65,6 +66,8 @@ def _dimensions(label: Label, text: str, count: int) -> list[str | None]:
         if len(named) == count:
             return list(named)
     if _DIAMETER.search(text) and count == 2:
-        return ["length", "diameter"] if not text.strip().startswith("ø") else ["diameter", "length"]
+        return (
+            ["length", "diameter"] if not text.strip().startswith("ø") else ["diameter", "length"]
+        )
     default = ["height", "width", "depth"] if count == 3 else ["height", "width"]
     return list(default)

@@ -68,8 +68,9 @@ UNITS: dict[Quantity, frozenset[str]] = {
 _NEEDS_UNIT = frozenset(
     {Quantity.FREQUENCY, Quantity.BANDWIDTH, Quantity.SIZE, Quantity.EFFECTIVE_AREA}
 )
-_FOREIGN_BEHIND = re.compile(r"\s*(?:[A-Za-zА-я]{2,}\b)?")
-_LIST_JOINT = re.compile(r"\s*(?:/|,|;|&|\*|\||、|\bor\b|\band\b|\bund\b|\by\b|\be\b|\bet\b|\bи\b|x|\+)\s*")
+_LIST_JOINT = re.compile(
+    r"\s*(?:/|,|;|&|\*|\||x|\+|\b(?:or|and|und|oder|y|e|et|i|и|o)\b|或|和|及)\s*", re.IGNORECASE
+)
 _NAME = re.compile(r"([A-Za-z][\w .+-]{0,24}?)\s*[:=]\s*$")
 _NAMED_BAND = re.compile(r"\b(low|mid|high|lower|upper)\b(?:\s*band)?", re.IGNORECASE)
 _ANGLE_CONDITION = re.compile(r"(?:elevation|el\.?|at|@)\s*$", re.IGNORECASE)
@@ -98,9 +99,7 @@ def read_values(label: Label, folded: str, unit: str | None = None) -> list[Read
     for index, (figure, source) in enumerate(kept):
         before, behind = _surroundings(text, kept, index)
         band = next((b for f, b in bands.items() if f.start == figure.start), None)
-        readings.append(
-            _reading(label, figure, source, before, behind, index, len(kept), band)
-        )
+        readings.append(_reading(label, figure, source, before, behind, index, len(kept), band))
     return _planes_in_order(label, readings)
 
 
@@ -126,7 +125,7 @@ def _conditions(
     figure behind.
     """
     frequencies = [f for f in figures if _is_frequency(text, f)]
-    values = [f for f in figures if f not in frequencies and not _is_angle(text, f, quantity)]
+    values = [f for f in figures if f not in frequencies and not _is_angle(f, quantity)]
     bands: dict[Figure, Band] = {}
     leading = bool(frequencies and values and frequencies[0].start < values[0].start)
     for frequency in frequencies:
@@ -167,7 +166,7 @@ def _is_frequency(text: str, figure: Figure) -> bool:
     return figure.unit == "" and text[: figure.start].rstrip()[-1:] == "@" and figure.low >= 30
 
 
-def _is_angle(text: str, figure: Figure, quantity: Quantity) -> bool:
+def _is_angle(figure: Figure, quantity: Quantity) -> bool:
     """An elevation angle beside a gain is a condition."""
     return measures(figure.unit) == "angle" and quantity not in (
         Quantity.BEAMWIDTH, Quantity.ELECTRICAL_TILT,
@@ -189,7 +188,7 @@ def _with_units(
     outer = outer if outer and measures(outer) in allowed else None
     kept: list[tuple[Figure, str]] = []
     for index, figure in enumerate(figures):
-        if figure.times and quantity is not Quantity.SIZE and not _plane_product(quantity, figure):
+        if figure.times and quantity is not Quantity.BEAMWIDTH:  # 65° x 9° are two beamwidths
             continue
         unit, source = figure.unit, "value"
         if not unit:
@@ -206,11 +205,6 @@ def _with_units(
             continue
         kept.append((replace(figure, unit=unit), source))
     return kept
-
-
-def _plane_product(quantity: Quantity, figure: Figure) -> bool:
-    """65° x 9°: a product of two beamwidths."""
-    return quantity is Quantity.BEAMWIDTH
 
 
 def _vswr_like(figure: Figure) -> bool:
@@ -241,9 +235,7 @@ def _stray_word_behind(text: str, figure: Figure) -> bool:
     return found is None and len(re.split(r"[^\w]", behind)[0]) > 1
 
 
-def _surroundings(
-    text: str, values: list[tuple[Figure, str]], index: int
-) -> tuple[str, str]:
+def _surroundings(text: str, values: list[tuple[Figure, str]], index: int) -> tuple[str, str]:
     """What stands before and behind a figure within its own piece of the list."""
     figure = values[index][0]
     start = values[index - 1][0].end if index else 0
@@ -373,9 +365,15 @@ def _planes_in_order(label: Label, readings: list[Reading]) -> list[Reading]:
     ]
 
 
-def _frequencies(
-    label: Label, text: str, figures: list[Figure], unit: str | None
-) -> list[Reading]:
+def _mixed_units(figure: Figure) -> Figure:
+    """'1.575±40MHz' is a centre in GHz with its tolerance in MHz."""
+    tolerance = figure.tolerance
+    if figure.unit == "MHz" and tolerance is not None and tolerance >= 10 > figure.low:
+        return replace(figure, unit="GHz", tolerance=tolerance / 1000)
+    return figure
+
+
+def _frequencies(label: Label, text: str, figures: list[Figure], unit: str | None) -> list[Reading]:
     """The bands of a frequency value; a return loss or VSWR beside them is no frequency."""
     outer = label.unit or unit
     outer = outer if outer and measures(outer) == "frequency" else None
@@ -392,11 +390,8 @@ def _frequencies(
                 name, source = kept[-1][0].unit, "list"
         if measures(name) != "frequency" or figure.times:
             continue
-        tolerance = figure.tolerance
-        if name == "MHz" and tolerance is not None and tolerance >= 10 > figure.low:
-            # '1.575±40MHz': a centre in GHz with its tolerance in MHz
-            name, figure = "GHz", replace(figure, tolerance=tolerance / 1000)
-        kept.append((replace(figure, unit=name), name, source))
+        mended = _mixed_units(replace(figure, unit=name))
+        kept.append((mended, mended.unit, source))
     readings = []
     for place, (figure, name, source) in enumerate(kept):
         before = text[(kept[place - 1][0].end if place else 0) : figure.start]

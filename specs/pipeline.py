@@ -1,0 +1,156 @@
+"""A document in, a judged report out: the one place that shows the whole way.
+
+::
+
+    bytes --reading--> Document --extraction--> Sheet --rules, estimate--> judgements --report--> Report
+
+Untrusted bytes are taken this way in a child process with limits (``Checker``). Text that the
+caller already holds, and claims given as JSON, are judged in this process.
+"""
+
+from __future__ import annotations
+
+import hashlib
+import json
+from collections.abc import Callable, Iterable, Iterator
+from pathlib import Path
+from types import TracebackType
+from typing import Any
+
+from specs.claims import Sheet
+from specs.claims.given import sheet_from_claims
+from specs.errors import ClaimsError, SheetError
+from specs.estimate import planning_gain
+from specs.extraction import extract
+from specs.reading import Limits, Sandbox, read, render_page
+from specs.report.assemble import build_report
+from specs.report.model import Report
+from specs.rules.engine import judge
+
+
+def read_sheet(data: bytes, name: str, limits: Limits | None = None) -> Sheet:
+    """All claims of a document, read in this process: for bytes that are trusted.
+
+    Raises a ``SheetError`` when the document cannot be read.
+    """
+    return extract(read(data, name, limits or Limits()))
+
+
+def judge_sheet(sheet: Sheet) -> Report:
+    """The report on a sheet whose claims are read."""
+    judgements = [judge(antenna, sheet) for antenna in sheet.antennas]
+    planning = [planning_gain(antenna) for antenna in sheet.antennas]
+    return build_report(sheet, judgements, planning)
+
+
+def check_text(text: str, name: str = "sheet.txt") -> Report:
+    """The report on a sheet given as plain text or Markdown.
+
+    >>> check_text("Gain: 3 dBi\\nDirectivity: 2 dBi").verdict
+    'hold'
+    """
+    return judge_sheet(read_sheet(text.encode(), name))
+
+
+def check_claims(given: str | bytes | dict[str, Any], name: str = "claims.json") -> Report:
+    """The report on claims given as ``beamproof.claims/1`` (JSON text or a dictionary).
+
+    Raises ``ClaimsError`` with every fault and its place.
+    """
+    if isinstance(given, dict):
+        try:
+            body = json.dumps(given, sort_keys=True, allow_nan=False).encode()
+        except (TypeError, ValueError) as error:
+            raise ClaimsError(f"The claims are no JSON: {error}.") from error
+    else:
+        body = given.encode() if isinstance(given, str) else given
+    return judge_sheet(sheet_from_claims(given, name, hashlib.sha256(body).hexdigest()))
+
+
+def check_file(path: str | Path) -> Report:
+    """The report on one file, read in a child process with limits.
+
+    A name that ends in ``.json`` is read as claims. Raises ``SheetError``, ``ClaimsError`` or
+    ``OSError``. For many files, hold one ``Checker``.
+    """
+    path = Path(path)
+    with Checker() as checker:
+        return checker.check(path.read_bytes(), path.name)
+
+
+class Checker:
+    """Checks sheets in warm child processes with limits on time, memory and size.
+
+    Thread-safe. Use as a context manager, or call ``close``.
+    """
+
+    def __init__(self, workers: int = 1, limits: Limits | None = None) -> None:
+        self._limits = limits or Limits()
+        self._sandbox: Sandbox[Any] = Sandbox(_work, workers=workers, limits=self._limits)
+
+    def check(self, data: bytes, name: str) -> Report:
+        """The report on one document. Raises ``SheetError`` or ``ClaimsError``."""
+        if name.lower().endswith(".json"):
+            return check_claims(data, name)
+        report: Report = self._sandbox.run("check", data, name, self._limits)
+        return report
+
+    def check_many(
+        self,
+        items: Iterable[tuple[bytes | Path, str]],
+        progress: Callable[[int], None] | None = None,
+    ) -> Iterator[tuple[str, Report | Exception]]:
+        """Reports on many documents, in order; an error stands in the place of its report.
+
+        ``items`` are (bytes or path, name); ``progress`` is told how many are done.
+        """
+        listed = list(items)
+        jobs = (("check", data, name, self._limits) for data, name in listed)
+        results = self._sandbox.map(jobs)
+        for done, ((_, name), result) in enumerate(zip(listed, results, strict=True), start=1):
+            if progress is not None:
+                progress(done)
+            yield name, result
+
+    def page_image(self, data: bytes, number: int, dpi: int = 110) -> bytes:
+        """One page of a PDF as PNG. ``number`` counts from 1. Raises ``SheetError``."""
+        image: bytes = self._sandbox.run("image", data, number, dpi)
+        return image
+
+    def close(self) -> None:
+        """End the child processes."""
+        self._sandbox.close()
+
+    def __enter__(self) -> Checker:
+        return self
+
+    def __exit__(
+        self,
+        kind: type[BaseException] | None,
+        error: BaseException | None,
+        trace: TracebackType | None,
+    ) -> None:
+        self.close()
+
+
+def _work(task: str, data: bytes | Path, *rest: Any) -> Any:
+    """What a child process does: runs there, on untrusted bytes."""
+    body = data.read_bytes() if isinstance(data, Path) else data
+    if task == "image":
+        number, dpi = rest
+        return render_page(body, number, dpi=dpi)
+    name, limits = rest
+    if name.lower().endswith(".json"):
+        return check_claims(body, name)
+    return judge_sheet(read_sheet(body, name, limits))
+
+
+__all__ = [
+    "Checker",
+    "SheetError",
+    "check_claims",
+    "check_file",
+    "check_text",
+    "judge_sheet",
+    "read_sheet",
+]
