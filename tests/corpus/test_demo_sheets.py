@@ -147,9 +147,16 @@ def differences(want: Row, claim: Row, single_band: bool) -> list[str]:
     return wrong
 
 
+def is_one_band(frequencies: list[Row]) -> bool:
+    """Whether all stated frequencies lie within one of them, so that naming it is no mistake."""
+    ends = [(claim["low"], claim.get("high", claim["low"])) for claim in frequencies]
+    widest = max(ends, key=lambda band: band[1] - band[0], default=(1.0, 0.0))
+    return bool(ends) and all(widest[0] <= low and high <= widest[1] for low, high in ends)
+
+
 def compare_claims(want_antenna: Row, found_antenna: Row) -> list[str]:
     wanted, left = list(want_antenna["claims"]), list(found_antenna["claims"])
-    single_band = sum(claim["quantity"] == "frequency" for claim in wanted) == 1
+    single_band = is_one_band([claim for claim in wanted if claim["quantity"] == "frequency"])
     wrong = []
     for want in wanted:
         twins = [claim for claim in left if is_same_figure(want, claim)]
