@@ -12,10 +12,10 @@ from pathlib import Path
 from typing import Any
 
 import pytest
-from specs.pipeline import Checker
 
 from fixtures.hostile import CASES, Case
 from specs.errors import SheetError
+from specs.pipeline import Checker
 
 GOOD = Path(__file__).resolve().parents[2] / "fixtures" / "sheets" / "ka-d600-58-dish.pdf"
 SECONDS = 60.0
