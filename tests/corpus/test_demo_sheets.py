@@ -137,7 +137,7 @@ def differences(want: Row, claim: Row, single_band: bool) -> list[str]:
             wrong.append(f"band {band}, not {wanted_band}")
     elif band and not single_band and want["quantity"] != "frequency":
         wrong.append(f"band {band}, where none is stated")
-    nominal = want.get("nominal", None if spread else want.get("low"))
+    nominal = want.get("nominal", [want["low"], want["high"]] if spread else want.get("low"))
     got = claim["normalized"]["nominal"]
     if isinstance(nominal, list):
         if not nominal[0] <= got <= nominal[1]:
