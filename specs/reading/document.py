@@ -39,7 +39,8 @@ class Page:
 
     ``words`` in reading (stream) order, upright text only; ``rotated`` the rest.
     ``cells`` are the smallest closed rectangles of the rulings (or the cells of a markup table);
-    ``vertical`` rulings as (x, top, bottom), ``horizontal`` as (y, x0, x1). ``images`` are boxes.
+    ``vertical`` rulings as (x, top, bottom), ``horizontal`` as (y, x0, x1). ``images`` are boxes;
+    ``painted`` counts paths and images, so that a blank page and a scan differ.
     """
 
     number: int
@@ -52,6 +53,7 @@ class Page:
     images: tuple[BBox, ...] = ()
     rotated: tuple[Word, ...] = ()
     read_by: str = "text"
+    painted: int = 0
 
 
 @dataclass(frozen=True, slots=True)
