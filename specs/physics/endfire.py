@@ -11,10 +11,12 @@ from specs.physics.decibels import to_db
 from specs.physics.elementwise import Real, elementwise
 
 YAGI_CEILING_DBI: Final = {
-    1: 2.15, 2: 7.51, 3: 10.56, 4: 12.82, 5: 14.6, 6: 16.1, 7: 17.4, 8: 18.3,
+    1: 2.16, 2: 7.52, 3: 10.57, 4: 12.83, 5: 14.62, 6: 16.10, 7: 17.37, 8: 18.47,
+    9: 19.45, 10: 20.33, 11: 21.13, 12: 21.86,
 }  # fmt: skip
 """Most directivity of N parallel half-wave dipoles with any currents, dBi, in free space, as the
-spacing goes to zero. Derived: D = 1.6409·R11·aᴴR⁻¹a with sinusoidal currents."""
+spacing goes to zero. Derived: D = 1.6409·R11·aᴴR⁻¹a with sinusoidal currents, computed with 40
+digits down to a spacing of 0.01 λ (0.05 λ for 12) and rounded up."""
 
 NBS_YAGIS: Final = (
     (0.4, 3, 7.1), (0.8, 5, 9.2), (1.2, 6, 10.2),
@@ -27,10 +29,10 @@ moments within −0.26 and +0.42 dB."""
 
 @elementwise
 def yagi_element_ceiling_dbi(elements: Real) -> Real:
-    """Directivity that N half-wave elements in free space do not exceed, dBi; inf above 8.
+    """Directivity that N half-wave elements in free space do not exceed, dBi; inf above 12.
 
     >>> yagi_element_ceiling_dbi(3)
-    10.56
+    10.57
     """
     count = np.floor(elements)
     known: Real = np.interp(count, list(YAGI_CEILING_DBI), list(YAGI_CEILING_DBI.values()))

@@ -535,3 +535,8 @@ FAMILIES: tuple[Callable[[], Iterator[TrueAntenna]], ...] = (
 def true_antennas() -> tuple[TrueAntenna, ...]:
     """Every antenna of the catalogue, in the order of the families; computed once."""
     return tuple(antenna for family in FAMILIES for antenna in family())
+
+
+def of_family(*families: str) -> tuple[TrueAntenna, ...]:
+    """The antennas of some families, by the first words of their names ("disk", "dipole row")."""
+    return tuple(antenna for antenna in true_antennas() if antenna.family in families)
