@@ -16,8 +16,8 @@ from typing import TYPE_CHECKING, Any
 if TYPE_CHECKING:
     from specs.claims.normalize import normalize
     from specs.conversion import convert
-    from specs.extraction import extract
-    from specs.pipeline import Checker, check_claims, check_file, check_text, read_sheet
+    from specs.extraction import extract, read_sheet
+    from specs.pipeline import Checker, check_claims, check_file, check_text
     from specs.report.model import Report
     from specs.rules import RULES
 
@@ -31,7 +31,7 @@ _HOME = {
     "convert": "specs.conversion",
     "extract": "specs.extraction",
     "normalize": "specs.claims.normalize",
-    "read_sheet": "specs.pipeline",
+    "read_sheet": "specs.extraction",
 }
 
 __all__ = [

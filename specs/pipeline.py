@@ -19,21 +19,13 @@ from typing import Any
 
 from specs.claims import Sheet
 from specs.claims.given import sheet_from_claims
-from specs.errors import ClaimsError, SheetError
+from specs.errors import BeamproofError, ClaimsError, SheetError
 from specs.estimate import planning_gain
-from specs.extraction import extract
-from specs.reading import Limits, Sandbox, read, render_page
+from specs.extraction import read_sheet
+from specs.reading import Limits, Sandbox
 from specs.report.assemble import build_report
 from specs.report.model import Report
 from specs.rules.engine import judge
-
-
-def read_sheet(data: bytes, name: str, limits: Limits | None = None) -> Sheet:
-    """All claims of a document, read in this process: for bytes that are trusted.
-
-    Raises a ``SheetError`` when the document cannot be read.
-    """
-    return extract(read(data, name, limits or Limits()))
 
 
 def judge_sheet(sheet: Sheet) -> Report:
@@ -86,36 +78,39 @@ class Checker:
 
     def __init__(self, workers: int = 1, limits: Limits | None = None) -> None:
         self._limits = limits or Limits()
-        self._sandbox: Sandbox[Any] = Sandbox(_work, workers=workers, limits=self._limits)
+        self._sandbox = Sandbox(_work, workers=workers, limits=self._limits)
 
     def check(self, data: bytes, name: str) -> Report:
         """The report on one document. Raises ``SheetError`` or ``ClaimsError``."""
-        if name.lower().endswith(".json"):
-            return check_claims(data, name)
-        report: Report = self._sandbox.run("check", data, name, self._limits)
-        return report
+        return Report.model_validate_json(self.check_json(data, name))
+
+    def check_json(self, data: bytes, name: str) -> bytes:
+        """The report on one document as JSON, as the child process wrote it."""
+        return self._sandbox.run("check", data, name, self._limits)
 
     def check_many(
         self,
         items: Iterable[tuple[bytes | Path, str]],
         progress: Callable[[int], None] | None = None,
-    ) -> Iterator[tuple[str, Report | Exception]]:
+    ) -> Iterator[tuple[str, Report | BeamproofError]]:
         """Reports on many documents, in order; an error stands in the place of its report.
 
         ``items`` are (bytes or path, name); ``progress`` is told how many are done.
         """
         listed = list(items)
         jobs = (("check", data, name, self._limits) for data, name in listed)
-        results = self._sandbox.map(jobs)
-        for done, ((_, name), result) in enumerate(zip(listed, results, strict=True), start=1):
+        results = zip(listed, self._sandbox.map(jobs), strict=True)
+        for done, ((_, name), result) in enumerate(results, start=1):
             if progress is not None:
                 progress(done)
-            yield name, result
+            if isinstance(result, BeamproofError):
+                yield name, result
+            else:
+                yield name, Report.model_validate_json(result)
 
-    def page_image(self, data: bytes, number: int, dpi: int = 110) -> bytes:
+    def page_image(self, data: bytes, number: int, dpi: float = 110) -> bytes:
         """One page of a PDF as PNG. ``number`` counts from 1. Raises ``SheetError``."""
-        image: bytes = self._sandbox.run("image", data, number, dpi)
-        return image
+        return self._sandbox.run("image", data, number, dpi)
 
     def close(self) -> None:
         """End the child processes."""
@@ -133,24 +128,24 @@ class Checker:
         self.close()
 
 
-def _work(task: str, data: bytes | Path, *rest: Any) -> Any:
+def _work(task: str, data: bytes | Path, *rest: Any) -> bytes:
     """What a child process does: runs there, on untrusted bytes."""
-    body = data.read_bytes() if isinstance(data, Path) else data
+    body = _read_bytes(data) if isinstance(data, Path) else data
     if task == "image":
+        from specs.reading import render_page
+
         number, dpi = rest
         return render_page(body, number, dpi=dpi)
     name, limits = rest
     if name.lower().endswith(".json"):
-        return check_claims(body, name)
-    return judge_sheet(read_sheet(body, name, limits))
+        report = check_claims(body, name)
+    else:
+        report = judge_sheet(read_sheet(body, name, limits))
+    return report.model_dump_json(by_alias=True).encode()
 
 
-__all__ = [
-    "Checker",
-    "SheetError",
-    "check_claims",
-    "check_file",
-    "check_text",
-    "judge_sheet",
-    "read_sheet",
-]
+def _read_bytes(path: Path) -> bytes:
+    try:
+        return path.read_bytes()
+    except OSError as error:
+        raise SheetError(f"The file cannot be opened: {error.strerror}.") from error

@@ -24,7 +24,7 @@ _ANTENNA_HEADING = re.compile(
 )  # fmt: skip
 _COMPANY = re.compile(
     r"noise figure|rauschzahl|rauschmaß|噪声|雑音|잡음|noise factor|figura de ruido|"
-    r"facteur de bruit|supply voltage|dc voltage|operating voltage|voltage|spannung|工作电压|电压|電圧|전압|\bvdc\b|"
+    r"facteur de bruit|voltage|spannung|电压|電圧|전압|\bvdc\b|"
     r"current|stromaufnahme|电流|電流|\bma\b", re.IGNORECASE,
 )  # fmt: skip
 

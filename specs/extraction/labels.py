@@ -156,7 +156,7 @@ def _phrase(lowered: str, at: int, draft: _Draft) -> int | None:
     if at and lowered[at - 1].isalpha() and lowered[at - 1].isascii() and lowered[at].isascii():
         return None
     found = phrase_at(lowered, at)
-    if found is None:
+    if found is None or _is_name(lowered, at, found.end):
         return None
     if draft.quantity_so_far() == "polarization" and found.tags[0].group == "plane":
         return None  # 'Polarization Vertical': the word is the value
@@ -165,6 +165,15 @@ def _phrase(lowered: str, at: int, draft: _Draft) -> int | None:
         if tag.group == "plane":
             draft.planes.append(Plane(tag.name))
     return found.end
+
+
+def _is_name(lowered: str, at: int, end: int) -> bool:
+    """BW-868-10, AR-5: a short head with a glued dash and a figure is a model name."""
+    return (
+        end - at <= 4
+        and re.match(r"-?\w*\d", lowered[end:]) is not None
+        and (lowered[end : end + 1] == "-" or lowered[end : end + 1].isdigit())
+    )
 
 
 def _level(lowered: str, at: int, draft: _Draft) -> int | None:

@@ -18,7 +18,7 @@ from specs.extraction.values import Reading, read_values
 _REJECT = re.compile(
     r"\bloss|noise|amplif|\blna\b|lower|higher|more than|less than|\berp\b|eirp|=\s*\d|improve|"
     r"increase|reduc|compar|versus|\bvs\b|exceed|degrad|other|optional|accessor|related|instead|"
-    r"relative to|limit|example|table|figure|below|theor|formula|typically between|difference|would|ideal|"
+    r"relative to|limit|example|table|figure|below|theor|formula|difference|would|ideal|"
     r"isotropic",
     re.IGNORECASE,
 )

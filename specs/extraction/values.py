@@ -195,6 +195,8 @@ def _with_units(
             unit, source = _unit_behind(text, figures, index), "list"
         if not unit:
             unit, source = outer or "", "label"
+        if quantity is Quantity.IMPEDANCE and unit == "W":
+            unit = "ohm"  # the symbol font's letter W prints an omega
         if unit and measures(unit) not in allowed:
             continue
         if not unit:

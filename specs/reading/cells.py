@@ -50,7 +50,7 @@ def _covered(
     along: npt.NDArray[np.float64],
     lines: list[tuple[float, float, float]],
 ) -> npt.NDArray[np.bool_]:
-    """Which stretches between neighbouring positions ``along`` a ruling covers, at each ``across``."""
+    """Which stretches between neighbours of ``along`` a ruling covers, at each ``across``."""
     covered = np.zeros((len(across), len(along) - 1), dtype=bool)
     array = np.asarray(lines)
     at = np.abs(across[:, None] - array[None, :, 0]).argmin(axis=0)
@@ -61,9 +61,7 @@ def _covered(
     return covered
 
 
-def _groups(
-    over: npt.NDArray[np.bool_], beside: npt.NDArray[np.bool_]
-) -> npt.NDArray[np.int64]:
+def _groups(over: npt.NDArray[np.bool_], beside: npt.NDArray[np.bool_]) -> npt.NDArray[np.int64]:
     """Number of the group of each square; squares with no ruling between share one."""
     rows, columns = beside.shape[0], over.shape[1]
     parent = list(range(rows * columns))

@@ -130,10 +130,10 @@ def characters(text_page: pdfium.FPDF_TEXTPAGE, frame: Frame) -> Characters:
 def _codes(text_page: pdfium.FPDF_TEXTPAGE, count: int) -> npt.NDArray[np.int64]:
     buffer = (ctypes.c_ushort * (count + 1))()
     written = pdfium.FPDFText_GetText(text_page, 0, count, buffer)
-    codes = np.frombuffer(buffer, dtype=np.uint16)[: max(written - 1, 0)].astype(np.int64)
+    codes = np.frombuffer(bytes(buffer), dtype=np.uint16)[: max(written - 1, 0)].astype(np.int64)
     surrogates = bool(((codes >= 0xD800) & (codes < 0xE000)).any())
     if len(codes) == count and not surrogates:
-        return codes
+        return np.asarray(codes)
     one = pdfium.FPDFText_GetUnicode
     return np.array([one(text_page, i) for i in range(count)], dtype=np.int64)
 

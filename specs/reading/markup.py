@@ -10,7 +10,8 @@ import hashlib
 import re
 from collections.abc import Iterator
 
-from bs4 import BeautifulSoup, NavigableString, Tag
+from bs4 import BeautifulSoup
+from bs4.element import NavigableString, Tag
 
 from specs.claims.claim import BBox
 from specs.errors import EmptySheet, SheetTooLarge
@@ -21,8 +22,8 @@ from specs.reading.text import decoded
 
 _DROPPED = ("script", "style", "head", "template", "noscript", "svg", "iframe", "object", "nav")
 _BLOCKS = frozenset(
-    "p div li h1 h2 h3 h4 h5 h6 dt dd section article header footer main ul ol dl body html "
-    "blockquote pre figure figcaption aside address caption form fieldset td th tr".split()
+    "p div li h1 h2 h3 h4 h5 h6 dt dd section article header footer main ul ol dl body html"  # noqa: SIM905
+    " blockquote pre figure figcaption aside address caption form fieldset td th tr".split()
 )
 _FRONT_MATTER = re.compile(r"\A---\n.*?\n---\n", re.DOTALL)
 _HEADING_SIZE = {"h1": 18.0, "h2": 14.0, "h3": 12.0}
@@ -37,22 +38,24 @@ def read_markdown(data: bytes, name: str, limits: Limits) -> Document:
     text = _FRONT_MATTER.sub("", decoded(data))
     _check_size(text, limits)
     html = MarkdownIt("commonmark", {"html": True, "breaks": True}).enable("table").render(text)
-    return _document(html, data, name, "text/markdown", limits)
+    return _document(html, data, name, "text/markdown")
 
 
 def read_html(data: bytes, name: str, limits: Limits) -> Document:
     """The blocks and tables of an HTML page."""
     text = decoded(data)
     _check_size(text, limits)
-    return _document(text, data, name, "text/html", limits)
+    return _document(text, data, name, "text/html")
 
 
 def _check_size(text: str, limits: Limits) -> None:
     if len(text) > limits.characters:
-        raise SheetTooLarge(f"The page has {len(text)} characters; {limits.characters} are allowed.")
+        raise SheetTooLarge(
+            f"The page has {len(text)} characters; {limits.characters} are allowed."
+        )
 
 
-def _document(html: str, data: bytes, name: str, media_type: str, limits: Limits) -> Document:
+def _document(html: str, data: bytes, name: str, media_type: str) -> Document:
     if _depth(html) > _DEEPEST:
         raise SheetTooLarge(f"The page nests more than {_DEEPEST} elements.")
     soup = BeautifulSoup(html, "html.parser")
@@ -63,7 +66,9 @@ def _document(html: str, data: bytes, name: str, media_type: str, limits: Limits
     layout.flush()
     if not layout.words:
         raise EmptySheet("The page holds no text.")
-    page = Page(1, max(layout.width, 1.0), layout.y + LINE, tuple(layout.words), tuple(layout.cells))
+    page = Page(
+        1, max(layout.width, 1.0), layout.y + LINE, tuple(layout.words), tuple(layout.cells)
+    )
     title = soup.title.get_text(" ", strip=True) if soup.title else None
     digest = hashlib.sha256(data).hexdigest()
     return Document(name, digest, media_type, (page,), title=title)
@@ -132,7 +137,7 @@ class _Layout:
         self.y += LINE * self._size / SIZE
 
     def _table(self, table: Tag) -> None:
-        nested = [t for t in table.find_all("table")]
+        nested = list(table.find_all("table"))
         rows = _grid([tr for tr in table.find_all("tr") if tr.find_parent("table") is table])
         if not rows or len(rows) * max(len(r) for r in rows) > _MOST_CELLS:
             self.block(table)
@@ -190,7 +195,7 @@ def _grid(rows: list[Tag]) -> list[list[_Placed]]:
             line.append((cell, r, column, row_span, span))
             column += span
         placed.append(line)
-    return [line for line in placed] if any(placed) else []
+    return placed if any(placed) else []
 
 
 def _span(cell: Tag, name: str) -> int:
@@ -213,8 +218,10 @@ def _pieces(cell: Tag) -> Iterator[str]:
                 line = ""
         elif type(item) is NavigableString:
             parent = item.parent
-            if parent is not None and parent.name == "sup" and re.fullmatch(
-                r"\s*[\d*)(†‡]{1,3}\s*", str(item)
+            if (
+                parent is not None
+                and parent.name == "sup"
+                and re.fullmatch(r"\s*[\d*)(†‡]{1,3}\s*", str(item))
             ):
                 continue
             line += str(item)

@@ -203,5 +203,3 @@ def page_count(data: bytes) -> int:
     """Number of pages of a PDF. Raises a ``SheetError`` when it cannot be opened."""
     with opened(data) as document:
         return len(document)
-
-

@@ -16,9 +16,7 @@ def read(data: bytes, name: str, limits: Limits | None = None) -> Document:
     """
     limits = limits or Limits()
     if len(data) > limits.bytes:
-        raise SheetTooLarge(
-            f"The file has {len(data):,} bytes; {limits.bytes:,} are allowed."
-        )
+        raise SheetTooLarge(f"The file has {len(data):,} bytes; {limits.bytes:,} are allowed.")
     kind = format_of(data, name)
     if kind == "pdf":
         from specs.reading.pdf import read_pdf

@@ -8,6 +8,7 @@ from __future__ import annotations
 import ctypes
 from collections.abc import Iterator
 from dataclasses import dataclass, field
+from itertools import pairwise
 
 import numpy as np
 import pypdfium2.raw as pdfium
@@ -128,7 +129,7 @@ def _path(item: pdfium.FPDF_PAGEOBJECT, outer: _Matrix, frame: Frame, found: Rul
             found.add_box((min(xs), min(ys), max(xs), max(ys)))
             continue
         if stroke.value:
-            for (x0, y0), (x1, y1) in zip(shown, shown[1:], strict=False):
+            for (x0, y0), (x1, y1) in pairwise(shown):
                 found.add_line(x0, y0, x1, y1)
             if closed and len(shown) > 2:
                 found.add_line(*shown[-1], *shown[0])

@@ -36,7 +36,9 @@ def read_text(data: bytes, name: str, limits: Limits) -> Document:
     """The lines of a text, one page for every 400 of them."""
     text = decoded(data)
     if len(text) > limits.characters:
-        raise SheetTooLarge(f"The text has {len(text)} characters; {limits.characters} are allowed.")
+        raise SheetTooLarge(
+            f"The text has {len(text)} characters; {limits.characters} are allowed."
+        )
     if not text.strip():
         raise EmptySheet("The text holds nothing but white space.")
     lines = [_columns(line) for line in re.split(r"\n|\f", text)]
