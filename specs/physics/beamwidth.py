@@ -100,11 +100,12 @@ def convex_solid_angle(width1_deg: Real, width2_deg: Real) -> Real:
     >>> round(convex_solid_angle(90.0, 90.0), 4)
     1.3593
     """
-    half1, half2 = np.radians(width1_deg) / 2, np.radians(width2_deg) / 2
-    centred = 8 * np.arctan(np.tan(half1 / 2) * np.tan(half2 / 2))
-    corner = 2 * np.arctan(np.tan(half1) * np.tan(half2))
-    convex = (np.asarray(width1_deg) <= 180) & (np.asarray(width2_deg) <= 180)
-    least: Any = np.where(convex, np.minimum(centred, corner), np.nan)
+    quarter1, quarter2 = np.tan(np.radians(width1_deg) / 4), np.tan(np.radians(width2_deg) / 4)
+    both = quarter1 * quarter2
+    # tan(2x) = 2·tan x/(1 − tan² x): the corner's tangents from those of the centre.
+    corner = 4 * both / ((1 - quarter1 * quarter1) * (1 - quarter2 * quarter2))
+    least: Any = np.minimum(8 * np.arctan(both), 2 * np.arctan(np.abs(corner)))
+    least = np.where(np.maximum(quarter1, quarter2) <= 1.0, least, np.nan)
     return least[()]
 
 
@@ -117,8 +118,8 @@ def convex_limit_dbi(width1_deg: Real, width2_deg: Real) -> Real:
     >>> round(convex_limit_dbi(10.0, 10.0), 2)
     32.17
     """
-    solid_angle = convex_solid_angle(width1_deg, width2_deg)
-    limit: Any = np.where(np.isnan(solid_angle), np.inf, to_db(np.divide(8 * np.pi, solid_angle)))
+    limit: Any = to_db(np.divide(8 * np.pi, convex_solid_angle(width1_deg, width2_deg)))
+    limit = np.where(np.isnan(limit), np.inf, limit)
     return limit[()]
 
 

@@ -95,13 +95,15 @@ def _table(text: str) -> tuple[list[str], Floats]:
     )
     heading: list[str] = []
     rows: list[list[float]] = []
-    for line in lines:
+    for at, line in enumerate(lines, start=1):
         cells = [cell.strip() for cell in line.split(separator)] if line else []
         numbers = [_number(cell, separator) for cell in cells if cell]
         if numbers and None not in numbers:
             rows.append([number for number in numbers if number is not None])
         elif not rows and len(cells) > 1:
             heading = cells
+        elif rows and any(number is not None for number in numbers):
+            raise PatternError(f"Line {at} holds something beside numbers: '{line[:60]}'.")
         if len(rows) > MOST_POINTS:
             raise PatternError(f"The table has more than {MOST_POINTS} points.", "Thin it out.")
     if not rows:

@@ -205,6 +205,8 @@ UNUSABLE = [
     ("a,b\n1,2\n3,4", "no theta columns"),
     ("theta,phi,dB\n0,0,1\n90,0\n90,9,1\n", "do not have 3"),
     ("theta,phi,dB\n0,0,0\n90,90,0\n180,180,0", "missing"),
+    ("theta,phi,dB\n0,0,0\n90,90,nan\n180,180,0", "Line 3 holds something beside numbers"),
+    ("theta,phi,gain,level\n0,0,0,1\n90,90,0,1\n", "2 level columns"),
     ("theta,phi,dB\n" + "\n".join(f"{t},{p},0" for t in (0, 45, 90) for p in range(0, 360, 45)),
      "not from 0 to 180"),
     ("theta,phi,dB\n" + "\n".join(f"{t},{p},0" for t in (0, 90, 180) for p in range(0, 180, 45)),
