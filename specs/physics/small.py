@@ -38,8 +38,8 @@ def normal_gain_dbi(ka: Real) -> Real:
     """Largest gain without superdirectivity, dBi: max[3, (ka)² + 2ka].
 
     N² + 2N for all spherical modes up to N = ka; 3 for the crossed electric and magnetic dipole
-    that any size allows. Source: Harrington, IRE Trans. AP-6, 219–225, 1958 (from memory;
-    N² + 2N integrated in the tests).
+    that any size allows. Source: Harrington, IRE Trans. AP-6, 219–225, 1958, as quoted in IEEE
+    Antennas Propag. Mag. 51(4), 57, 2009; N² + 2N integrated in the tests.
 
     >>> round(normal_gain_dbi(2.0), 2), round(normal_gain_dbi(0.3), 2)
     (9.03, 4.77)
