@@ -52,7 +52,7 @@ def read_request(text: str) -> Request:
     unit = "x" if plain_ratio else figure.unit
     conditions: dict[str, Interval] = {}
     for other in others:
-        level = _beam_level(other) if measures(unit) == "angle" else None
+        level = _beam_level(other) if measures(figure.unit) == "angle" else None
         if level is not None:
             quantity = f"beamwidth at −{level:g} dB"
         else:

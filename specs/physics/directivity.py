@@ -48,10 +48,10 @@ def efficiency_from_levels(gain_dbi: Real, directivity_dbi: Real) -> Real:
 def efficiency_from_resistances(radiation_ohm: Real, loss_ohm: Real) -> Real:
     """η = Rr/(Rr + Rl), a ratio: radiation and loss resistance at the same terminals.
 
-    >>> efficiency_from_resistances(36.0, 4.0)
+    >>> round(efficiency_from_resistances(36.0, 4.0), 12)
     0.9
     """
-    return radiation_ohm / (radiation_ohm + loss_ohm)
+    return 1.0 / (1.0 + loss_ohm / radiation_ohm)
 
 
 @elementwise

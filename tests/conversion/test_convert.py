@@ -85,6 +85,11 @@ def test_at_most_opens_the_other_end() -> None:
     assert str(loss) == "at least 13.324 dB"
 
 
+def test_at_least_may_run_to_infinity() -> None:
+    answer = convert(">14 ohm with 4 ohm loss", "efficiency")
+    assert (answer.low, answer.high) == (pytest.approx(77.14, abs=0.01), 100.0)
+
+
 def test_a_frequency_band_widens_the_interval() -> None:
     spot = convert("12.0 dBi at 435 MHz", "m2")
     band = convert("12.0 dBi at 400-470 MHz", "m2")
@@ -124,6 +129,7 @@ BAD = [
     ("8 dBi", "vswrr", UnknownUnit, "Did you mean 'vswr'"),
     ("8 foo", "dBi", UnknownUnit, "Did you mean"),
     ("8 dBi", "", UnknownUnit, "such as dBi"),
+    ("8 x at x", "dBi", UnitsError, ""),
     ("8 dBi", "deg", IncompatibleUnits, "can be converted to: dBd"),
     ("8 dBm", "dBi", IncompatibleUnits, "can be converted to: dBW"),
     ("8 kg", "dBi", IncompatibleUnits, "a unit that belongs"),
@@ -191,3 +197,130 @@ def test_every_relation_is_undone_by_its_inverse(row, share: float, condition: f
 def test_examples_are_true(module: str) -> None:
     loaded = importlib.import_module(f"specs.conversion.{module}")
     assert doctest.testmod(loaded).failed == 0
+
+
+WORDS = st.sampled_from(
+    [
+        "7.5",
+        "-3",
+        "0",
+        "1.5:1",
+        "1:0",
+        "99999999999",
+        "1e400",
+        "0.0000001",
+        "1,575",
+        "±",
+        "<",
+        ">",
+        "at",
+        "@",
+        "with",
+        "-",
+        "–",
+        "dBi",
+        "dBd",
+        "dB",
+        "dBic",
+        "dB/m",
+        "x",
+        "%",
+        "ohm",
+        "m2",
+        "ft",
+        "MHz",
+        "GHz",
+        "deg",
+        "°",
+        "-10",
+        "VSWR",
+        "vswr",
+        "gain",
+        "return",
+        "loss",
+        "EIRP",
+        "ERP",
+        "W",
+        "dBm",
+        "beamwidth",
+        "nan",
+        "∞",
+        "½",
+        "²",
+        "efficiency",
+        "to",
+        "and",
+        ",",
+        ";",
+        "(",
+        ")",
+        "linear",
+    ]
+)
+
+
+NUMBERS = st.sampled_from(
+    [
+        "7.5",
+        "-3",
+        "0",
+        "1.0",
+        "1.5:1",
+        "1e400",
+        "100",
+        "0.5",
+        "≤1.5",
+        "<10",
+        ">14",
+        "3-6",
+        "16±0.5",
+        "7±9",
+    ]
+)
+UNITS = st.sampled_from(
+    [
+        "",
+        *[
+            "dBi",
+            "dBd",
+            "dB",
+            "dBil",
+            "dB/m",
+            "x",
+            "%",
+            "ohm",
+            "m2",
+            "MHz",
+            "GHz",
+            "deg",
+            "W",
+            "dBm",
+            "mm",
+        ],
+    ]
+)
+PLAIN = st.builds(
+    "{}{} {}{}".format,
+    st.sampled_from(["", "VSWR ", "return loss ", "EIRP ", "efficiency ", "beamwidth "]),
+    NUMBERS,
+    UNITS,
+    st.sampled_from(["", " at 450 MHz", " at 400-470 MHz", " at -10 dB", " with 4 ohm loss"]),
+)
+GOALS = st.sampled_from(["dBi", "VSWR", "return loss", "%", "dB", "x", "m2", "ERP", "-3 dB", "mm"])
+
+
+@given(
+    PLAIN | st.lists(WORDS, max_size=7).map(" ".join),
+    GOALS | st.lists(WORDS, max_size=3).map(" ".join),
+)
+def test_any_text_gives_an_answer_or_advice(text: str, to: str) -> None:
+    try:
+        answer = convert(text, to)
+        found = equivalents(text)
+    except UnitsError as error:
+        assert error.message
+    else:
+        for one in (answer, *found):
+            assert not math.isnan(one.nominal), one
+            assert one.low <= one.nominal <= one.high, one
+            assert str(one)
