@@ -5,6 +5,7 @@ from __future__ import annotations
 import math
 from collections import deque
 from collections.abc import Iterable, Iterator
+from contextlib import suppress
 from dataclasses import dataclass, replace
 from decimal import Decimal
 from functools import cache
@@ -12,7 +13,7 @@ from functools import cache
 from specs.conversion.relations import CONDITIONS, RELATIONS, Key, Relation
 from specs.conversion.request import Interval, Request, interval_of, read_condition, read_request
 from specs.conversion.scales import SCALES, Scale, of_request
-from specs.errors import IncompatibleUnits, MissingCondition
+from specs.errors import IncompatibleUnits, MissingCondition, UnreadableFigure
 
 
 @dataclass(frozen=True, slots=True)
@@ -95,13 +96,15 @@ def equivalents(
     """
     request = read_request(text)
     conditions = _conditions(request, frequency, loss_resistance)
-    return tuple(
-        _walk(request, start, way, conditions)
-        for start in request.scales
-        for goal in SCALES
-        if goal != start and (way := _way(_key(start), _key(goal)))
-        if all(row.needs is None or row.needs in conditions for row in way)
-    )
+    found = []
+    for start in request.scales:
+        for goal in SCALES:
+            way = _way(_key(start), _key(goal))
+            if way and all(row.needs is None or row.needs in conditions for row in way):
+                # A figure may have no equivalent: a −6 dB width beyond the full circle.
+                with suppress(UnreadableFigure):
+                    found.append(_walk(request, start, way, conditions))
+    return tuple(found)
 
 
 def _conditions(
@@ -175,6 +178,11 @@ def _walk(
         corners = list(_corners(row, low, high, condition, end))
         nominal = row.function(nominal, condition[1])
         low, high = min(corners), max(corners)
+        if not end.valid[0] <= nominal <= end.valid[1] * (1 + 1e-9):
+            raise UnreadableFigure(
+                f"{request.text} would be a {end.quantity} of {_figure(nominal)} {end.unit}.",
+                "There is none: check the figure.",
+            )
         formulas.append(
             row.formula.format(x=_figure(before), y=_figure(nominal), f=_figure(condition[1]))
         )

@@ -199,106 +199,16 @@ def test_examples_are_true(module: str) -> None:
     assert doctest.testmod(loaded).failed == 0
 
 
-WORDS = st.sampled_from(
-    [
-        "7.5",
-        "-3",
-        "0",
-        "1.5:1",
-        "1:0",
-        "99999999999",
-        "1e400",
-        "0.0000001",
-        "1,575",
-        "±",
-        "<",
-        ">",
-        "at",
-        "@",
-        "with",
-        "-",
-        "–",
-        "dBi",
-        "dBd",
-        "dB",
-        "dBic",
-        "dB/m",
-        "x",
-        "%",
-        "ohm",
-        "m2",
-        "ft",
-        "MHz",
-        "GHz",
-        "deg",
-        "°",
-        "-10",
-        "VSWR",
-        "vswr",
-        "gain",
-        "return",
-        "loss",
-        "EIRP",
-        "ERP",
-        "W",
-        "dBm",
-        "beamwidth",
-        "nan",
-        "∞",
-        "½",
-        "²",
-        "efficiency",
-        "to",
-        "and",
-        ",",
-        ";",
-        "(",
-        ")",
-        "linear",
-    ]
+ODD = (
+    "7.5 -3 0 1.5:1 1:0 99999999999 1e400 0.0000001 1,575 ± < > at @ with - – dBi dBd dB dBic dB/m "
+    "x % ohm m2 ft MHz GHz deg ° -10 VSWR vswr gain return loss EIRP ERP W dBm beamwidth nan ∞ ½ ² "
+    "efficiency to and , ; ( ) linear"
 )
-
-
-NUMBERS = st.sampled_from(
-    [
-        "7.5",
-        "-3",
-        "0",
-        "1.0",
-        "1.5:1",
-        "1e400",
-        "100",
-        "0.5",
-        "≤1.5",
-        "<10",
-        ">14",
-        "3-6",
-        "16±0.5",
-        "7±9",
-    ]
-)
-UNITS = st.sampled_from(
-    [
-        "",
-        *[
-            "dBi",
-            "dBd",
-            "dB",
-            "dBil",
-            "dB/m",
-            "x",
-            "%",
-            "ohm",
-            "m2",
-            "MHz",
-            "GHz",
-            "deg",
-            "W",
-            "dBm",
-            "mm",
-        ],
-    ]
-)
+FIGURES = "7.5 -3 0 1.0 1.5:1 1e400 100 0.5 ≤1.5 <10 >14 3-6 16±0.5 7±9"
+SPELLINGS = "dBi dBd dB dBil dB/m x % ohm m2 MHz GHz deg rad W dBm mm"
+WORDS = st.sampled_from(ODD.split())
+NUMBERS = st.sampled_from(FIGURES.split())
+UNITS = st.sampled_from(["", *SPELLINGS.split()])
 PLAIN = st.builds(
     "{}{} {}{}".format,
     st.sampled_from(["", "VSWR ", "return loss ", "EIRP ", "efficiency ", "beamwidth "]),
@@ -317,10 +227,9 @@ def test_any_text_gives_an_answer_or_advice(text: str, to: str) -> None:
     try:
         answer = convert(text, to)
         found = equivalents(text)
-    except UnitsError as error:
-        assert error.message
-    else:
-        for one in (answer, *found):
-            assert not math.isnan(one.nominal), one
-            assert one.low <= one.nominal <= one.high, one
-            assert str(one)
+    except UnitsError:
+        return  # the words of the advice are checked above
+    for one in (answer, *found):
+        assert not math.isnan(one.nominal), one
+        assert one.low <= one.nominal <= one.high * (1 + 1e-9), one
+        assert str(one)
