@@ -29,9 +29,13 @@ _COMPANY = re.compile(
 )  # fmt: skip
 
 
-def under_amplifier(record: Record, boxes: list[Box]) -> set[int]:
-    """Identities of the rows of a record whose figures stand under an amplifier heading."""
-    headings = sorted((b for b in boxes if _is_heading(b)), key=lambda b: (round(b.x0 / 40), b.top))
+def under_amplifier(record: Record, boxes: list[Box], labels: set[int]) -> set[int]:
+    """Identities of the rows of a record whose figures stand under an amplifier heading.
+
+    ``labels`` are the identities of labels that have a value: those are no headings.
+    """
+    free = [b for b in boxes if id(b) not in labels]
+    headings = sorted((b for b in free if _is_heading(b)), key=lambda b: (round(b.x0 / 40), b.top))
     found: set[int] = set()
     for row in record.rows:
         above = [h for h in headings if _heads(h, row.pair.box)]

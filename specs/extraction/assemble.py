@@ -63,7 +63,13 @@ class _Page:
 
     def surroundings(self, positioning: bool) -> Surroundings:
         return Surroundings(
-            self.page.number, self.boxes, self.names, self.values(), positioning, self.page.read_by
+            page=self.page.number,
+            boxes=self.boxes,
+            names=self.names,
+            used=self.values(),
+            labels={id(p.box) for p in self.pairs if p.values},
+            positioning=positioning,
+            read_by=self.page.read_by,
         )
 
     def values(self) -> set[int]:

@@ -9,10 +9,10 @@ from __future__ import annotations
 
 from dataclasses import dataclass, field
 
-from specs.claims import Band, Quantity
+from specs.claims import Band
 from specs.extraction.heads import Head, union_of
-from specs.extraction.pairing import Pair, Value
-from specs.extraction.records import Record
+from specs.extraction.pairing import Value
+from specs.extraction.records import Row
 from specs.extraction.tables import Box
 from specs.extraction.values import Reading
 
@@ -49,13 +49,11 @@ def add_frequency(bands: Bands, value: Value, readings: list[Reading]) -> None:
         bands.listed.append(found)
 
 
-def band_of(
-    reading: Reading, pair: Pair, value: Value, head: Head, bands: Bands, record: Record
-) -> Band | None:
+def band_of(reading: Reading, row: Row, value: Value, head: Head, bands: Bands) -> Band | None:
     """The band a reading holds for; None when the sheet does not say."""
     if reading.band is not None:
         return reading.band
-    for text in (value.band_text, pair.label.band_text):
+    for text in (value.band_text, row.pair.label.band_text):
         if text and (band := union_of(text)) is not None:
             return band
     if head.band is not None:
@@ -66,7 +64,7 @@ def band_of(
             # a value over all columns holds for all of them: no band of its own
             whole = len(over) == len(bands.columns) > 1
             return None if whole else (min(b[0] for b in over), max(b[1] for b in over))
-    if value.below and record.sampled:
+    if row.sampled:
         return next((b for box, b in bands.rows if _same_row(box, value.boxes[0])), None)
     if reading.named_band and len(bands.all) in (2, 3):
         index = _NAMED[reading.named_band]
@@ -99,6 +97,3 @@ def is_sample_list(readings: list[Reading]) -> bool:
     """Four or more spot frequencies in a row are points of a measurement, not claims."""
     spots = [r for r in readings if r.band is not None and r.band[0] == r.band[1]]
     return len(spots) >= 4 and len(spots) == len(readings)
-
-
-FREQUENCIES = frozenset({Quantity.FREQUENCY, Quantity.BANDWIDTH})

@@ -10,7 +10,6 @@ from specs.claims.normalize import DEFAULT_UNIT, normalize, stated_from
 from specs.errors import UnitsError
 from specs.extraction.amplifier import amplifier_row, suspicious, under_amplifier
 from specs.extraction.bands import (
-    FREQUENCIES,
     Bands,
     add_frequency,
     band_of,
@@ -18,7 +17,7 @@ from specs.extraction.bands import (
 )
 from specs.extraction.confidence import USUAL, confidence
 from specs.extraction.heads import Head, head_of
-from specs.extraction.pairing import Pair, Value
+from specs.extraction.pairing import FREQUENCIES, Pair, Value
 from specs.extraction.polarizations import polarization_kind
 from specs.extraction.records import Record, Row
 from specs.extraction.sizes import extents
@@ -51,6 +50,7 @@ class Surroundings:
     boxes: list[Box]
     names: dict[int, str]
     used: set[int]
+    labels: set[int]
     positioning: bool
     read_by: str
 
@@ -59,7 +59,7 @@ def read_record(record: Record, around: Surroundings) -> Found:
     """All claims of a record, and what looked like one and is not used."""
     found = Found()
     bands = Bands()
-    amplified = under_amplifier(record, around.boxes)
+    amplified = under_amplifier(record, around.boxes, around.labels)
     company = sum(r.pair.label.quantity is not None for r in record.rows)
     heads: dict[int, Head] = {}
     readings: dict[int, list[Reading]] = {}
@@ -187,7 +187,7 @@ def _figures(
         if suspicious(record, reading.quantity, reading.figure.low, around.positioning):
             found.unread.append(_unread(value.boxes[0], "amplifier", around.page, Quantity.GAIN))
             continue
-        band = band_of(reading, row.pair, value, head, bands, record)
+        band = band_of(reading, row, value, head, bands)
         claim, claim_facts = _claim(row, value, head, reading, band, around, facts)
         if claim is None:
             found.unread.append(
@@ -215,7 +215,7 @@ def _frequency_claims(
             return [Draft(c, head.name, f) for c, f in made if c is not None]
         return []
     spots = [r for r in readings if r.band and r.band[0] == r.band[1]]
-    if is_sample_list(readings) or (record.sampled and value.below and spots):
+    if is_sample_list(readings) or (row.sampled and spots):
         return []
     if value.columns >= 4 and spots:
         return []

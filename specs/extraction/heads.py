@@ -9,12 +9,13 @@ from __future__ import annotations
 import re
 from dataclasses import dataclass
 
-from specs.claims import Band, Statistic
+from specs.claims import Band, Quantity, Statistic
 from specs.extraction.pairing import Pair, Value, only_band, only_unit, same_column
 from specs.extraction.tables import Box
-from specs.extraction.values import mhz
+from specs.extraction.values import UNITS, mhz
 from specs.extraction.vocabulary import phrase_at
 from specs.units.figures import find_figures
+from specs.units.spellings import measures
 
 _MOST_ROWS = 60
 
@@ -59,7 +60,8 @@ def head_of(
         if statistic is not None:
             head.statistic = head.statistic or statistic
         elif (unit := only_unit(text)) is not None:
-            head.unit = head.unit or unit
+            if measures(unit) in UNITS.get(pair.label.quantity or Quantity.POLARIZATION, ()):
+                head.unit = head.unit or unit
         elif only_band(text):
             head.band = head.band or union_of(text)
         elif value.columns > 1 and _name_like(text):

@@ -54,6 +54,7 @@ _SEPARATOR = re.compile(r"\s*(?::|=(?!<|>)|\|)\s*|\s+-\s+|\s*-\s*(?=[<>≈~A-Za-
 _CONNECTOR = re.compile(r"\s*(?:-|/|,|&|\+|\band\b|\bor\b)\s*")
 _SIGN = re.compile(r"\s*(<=|>=|<|>)\s*(?=$|\)|:)")
 _LETTER_PLANE = re.compile(r"[\s(/,:-]*\b([hv])\b[.)]?", re.IGNORECASE)
+_LEADING_PLANE = re.compile(r"([hv])(?:[-.]\s?|\s)(?=beam|3\s?db|half|hpbw|bw\b|-3)")
 _LETTERS = {"h": Plane.AZIMUTH, "v": Plane.ELEVATION}
 _LONGEST_LABEL = 90
 
@@ -95,6 +96,10 @@ def read_label(folded: str) -> Label | None:
 def _walk(text: str, lowered: str, draft: _Draft) -> int:
     """Consume label text; returns where the rest begins."""
     at, end = 0, len(text)
+    letter = _LEADING_PLANE.match(lowered)
+    if letter and not draft.tags:
+        draft.planes.append(_LETTERS[letter[1]])
+        at = letter.end(1)
     while at < end:
         if text[at].isspace():
             at += 1
@@ -294,7 +299,8 @@ def _label(text: str, at: int, draft: _Draft, fuzzy: bool = False) -> Label | No
         return None
     position, tag = head
     quantity = Quantity(tag.name) if tag.group == "quantity" and tag.name != "model" else None
-    if rest and not draft.separated and not _value_like(rest, quantity):
+    short = at - position <= 4
+    if rest and not draft.separated and not _value_like(rest, quantity, short):
         return None
     if at > _LONGEST_LABEL:
         return None
@@ -362,18 +368,24 @@ def _plain(position: int, draft: _Draft) -> bool:
     return any(p == position and t.group in ("neutral", "kind") for p, t in draft.tags)
 
 
-def _value_like(rest: str, quantity: Quantity | None) -> bool:
+def _value_like(rest: str, quantity: Quantity | None, short: bool) -> bool:
     """Whether text behind a label, with no separator between, can be its value."""
     if quantity is None:
         return True
     if _STARTS_VALUE.match(rest):
-        return len(rest.split()) <= 16
+        return len(rest.split()) <= 16 and _unknown_words(rest) <= (0 if short else 2)
     if quantity is Quantity.POLARIZATION:
         return len(rest.split()) <= 5
     if re.match(r"[^\s:]{1,20}\s?:\s?[\d<>±-]", rest):
         return True
     first = rest.split()[0].lower()
     return first.startswith(("omni", "n/a", "rundstrahl"))
+
+
+def _unknown_words(text: str) -> int:
+    """Words of four letters or more that no vocabulary holds: running text, or a name."""
+    words = [w.lower() for w in re.findall(r"[^\W\d_]{4,}", text)]
+    return sum(phrase_at(w, 0) is None and unit_pattern().fullmatch(w) is None for w in words)
 
 
 def _statistic(quantity: Quantity | None, names: list[str]) -> Statistic | None:

@@ -19,6 +19,8 @@ from specs.extraction.vocabulary import phrase_at
 from specs.units.figures import find_figures
 from specs.units.spellings import measures, unit_of, unit_pattern
 
+FREQUENCIES = frozenset({Quantity.FREQUENCY, Quantity.BANDWIDTH})
+
 
 @dataclass(slots=True, eq=False)
 class Value:
@@ -57,10 +59,44 @@ def pairs(boxes: list[Box]) -> list[Pair]:
     found = [pair for pair in found if id(pair.box) not in nested]
     taken.update(id(b) for p in found for v in p.values for b in v.boxes if not v.inline)
     _extend_stacks(found, boxes, taken)
+    found.extend(_band_heads(found, boxes))
     for pair in found:
         if not pair.values and not pair.label.rest:
             _pair_below(pair, boxes, labelled, taken)
+    found.extend(_frequency_stubs(found, boxes, labelled, taken))
     return found
+
+
+def _band_heads(found: list[Pair], boxes: list[Box]) -> list[Pair]:
+    """Rows of bands over a table, without the word frequency: they are frequency rows too."""
+    known = {id(b) for p in found if p.label.quantity in FREQUENCIES
+             for b in [p.box, *(b for v in p.values for b in v.boxes)]}  # fmt: skip
+    bands = [b for b in boxes if id(b) not in known and only_band(b.text) and b.label is None]
+    made: list[Pair] = []
+    while bands:
+        row = [b for b in bands if overlap(b, bands[0])]
+        bands = [b for b in bands if b not in row]
+        under = [p for p in found if p.label.quantity in UNITS and len(p.values) > 1
+                 and p.box.top > row[0].top
+                 and sum(same_column(v.boxes[0], b) for v in p.values for b in row) > 1
+                 ]  # fmt: skip
+        if len(row) < 2 or not under:
+            continue
+        values = [Value(b.text, [b], i, len(row)) for i, b in enumerate(row)]
+        owner = next((p for p in found if any(v.boxes[0] in row for v in p.values)), None)
+        if owner is not None:
+            found.remove(owner)
+        home = owner.box if owner is not None else _corner(row, under[0])
+        made.append(Pair(Label("", Quantity.FREQUENCY, ""), home, values))
+    return made
+
+
+def _corner(row: list[Box], under: Pair) -> Box:
+    """Where the missing label of a band row would stand: over the labels, beside the bands."""
+    x0, _, x1, _ = under.box.text_box
+    first = row[0]
+    lines = first.lines
+    return Box(lines, x0, first.top, x1, first.bottom, first.ruled, "", None)
 
 
 def overlap(a: Box, b: Box) -> bool:
@@ -161,7 +197,7 @@ def _walk_row(pair: Pair, row: list[Box], nested: set[int]) -> bool:
             if columns or not _nested(label, other):
                 break
             nested.add(id(other))
-        if (unit := only_unit(other.text)) is not None:
+        if label.quantity in UNITS and (unit := only_unit(other.text)) is not None:
             pair.unit = pair.unit or unit
         elif not columns and _is_condition(label, other):
             band_text = other.text
@@ -307,6 +343,25 @@ def _pair_below(pair: Pair, boxes: list[Box], labelled: list[Box], taken: set[in
             continue
         pair.values.append(Value(other.text, [other], below=True, row=len(pair.values)))
         last = other
+
+
+def _frequency_stubs(
+    found: list[Pair], boxes: list[Box], labelled: list[Box], taken: set[int]
+) -> list[Pair]:
+    """'MHz' alone at the head of a column, beside heads with values below, means frequency."""
+    heads = [p for p in found if any(v.below for v in p.values)]
+    if not heads or any(p.label.quantity is Quantity.FREQUENCY for p in heads):
+        return []
+    made: list[Pair] = []
+    for box in boxes:
+        unit = only_unit(box.text) if box.label is None else None
+        if unit is None or measures(unit) != "frequency":
+            continue
+        if any(overlap(box, p.box) for p in heads):
+            pair = Pair(Label(box.text, Quantity.FREQUENCY, "", unit=unit), box)
+            _pair_below(pair, boxes, [*labelled, box], taken)
+            made.append(pair)
+    return made
 
 
 def _below(box: Box, boxes: list[Box]) -> list[Box]:

@@ -16,11 +16,15 @@ from specs.extraction.tables import Box
 
 @dataclass(slots=True, eq=False)
 class Row:
-    """One label with one set of values that belongs to one record."""
+    """One label with one set of values that belongs to one record.
+
+    ``sampled`` marks a row of a table of frequencies: its figures hold at the frequency of the row.
+    """
 
     page: int
     pair: Pair
     values: list[Value]
+    sampled: bool = False
 
 
 @dataclass(slots=True, eq=False)
@@ -30,7 +34,6 @@ class Record:
     page: int
     rows: list[Row] = field(default_factory=list)
     name: str | None = None
-    sampled: bool = False
     x0: float = 0.0
     top: float = 0.0
 
@@ -177,10 +180,10 @@ def _rows_of_table(page: int, table: list[Pair], boxes: list[Box]) -> list[Recor
             )
             for line, name in zip(lines, named, strict=True)
         ]
-    record = Record(page, x0=table[0].box.x0, top=table[0].box.top, sampled=True)
+    record = Record(page, x0=table[0].box.x0, top=table[0].box.top)
     for line in lines:
         for pair, value in line:
-            record.rows.append(Row(page, pair, [value]))
+            record.rows.append(Row(page, pair, [value], sampled=True))
     return [record]
 
 

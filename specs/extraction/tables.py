@@ -7,6 +7,7 @@ that stacks several labels (row rulings missing) is taken apart into rows.
 
 from __future__ import annotations
 
+import re
 from collections import defaultdict
 from dataclasses import dataclass
 
@@ -72,6 +73,7 @@ def boxes(page: Page, segments: list[Segment]) -> list[Box]:
     page_area = page.width * page.height
     for index, inside in held.items():
         found.extend(_cell_boxes(cells[index], inside, page_area))
+    found = _with_heads_joined(found)
     found.sort(key=lambda b: (round(b.lines[0].baseline), b.x0))
     return found
 
@@ -79,6 +81,65 @@ def boxes(page: Page, segments: list[Segment]) -> list[Box]:
 def free_box(segment: Segment) -> Box:
     """A box of its own for a free segment."""
     return Box([segment], *segment.bbox, False, segment.text, read_label(segment.text))
+
+
+def _with_heads_joined(found: list[Box]) -> list[Box]:
+    """Labels broken over two or three free lines, joined where only the whole reads as a label."""
+    free = [b for b in found if not b.ruled and len(b.text) <= 40 and not _numeric(b.text)]
+    free.sort(key=lambda b: b.top)
+    joined: dict[int, Box] = {}
+    gone: set[int] = set()
+    for first in free:
+        if id(first) in gone:
+            continue
+        stack = [first]
+        for below in free:
+            if len(stack) < 4 and id(below) not in gone and _follows(stack[-1], below):
+                stack.append(below)
+        while len(stack) > 1:
+            if (whole := _whole(stack)) is not None:
+                joined[id(first)] = whole
+                gone.update(id(b) for b in stack)
+                break
+            stack.pop()
+    kept = [b for b in found if id(b) not in gone]
+    return [*kept, *joined.values()]
+
+
+def _numeric(text: str) -> bool:
+    """Whether a text holds a digit, other than the level of a beamwidth or band edge."""
+    return bool(
+        re.search(r"\d", re.sub(r"[-–]?\b(?:3|6|10)\s?-?db", "", text, flags=re.IGNORECASE))
+    )
+
+
+def _follows(above: Box, below: Box) -> bool:
+    """Whether a free line stands right under another, in its column, in the same type size."""
+    gap = below.top - above.bottom
+    height = above.lines[0].height
+    across = min(above.x1, below.x1) - max(above.x0, below.x0)
+    return (
+        -0.4 * height < gap < 0.35 * height
+        and below.top > above.top + 0.5 * height
+        and across >= 0.5 * min(above.x1 - above.x0, below.x1 - below.x0)
+        and abs(above.size - below.size) < 0.1 * above.size
+    )
+
+
+def _whole(stack: list[Box]) -> Box | None:
+    """One box for a label set in several lines; None when the lines are labels of their own."""
+    lines = [line for box in stack for line in box.lines]
+    text = " ".join(line.text for line in lines)
+    label = read_label(text)
+    if label is None or label.rest or label.fuzzy:
+        return None
+    heads = {b.label.quantity for b in stack if b.label is not None and not b.label.fuzzy}
+    complete = sum(b.label is not None and not b.label.fuzzy for b in stack)
+    if len(heads) > 1 or (complete > 1 and label.foreign) or complete == len(stack) > 1:
+        return None
+    x0, top = min(b.x0 for b in stack), min(b.top for b in stack)
+    x1, bottom = max(b.x1 for b in stack), max(b.bottom for b in stack)
+    return Box(lines, x0, top, x1, bottom, False, text, label)
 
 
 def _cell_of(segment: Segment, cells: list[BBox]) -> int | None:
@@ -100,7 +161,10 @@ def _cell_boxes(cell: BBox, inside: list[Segment], page_area: float) -> list[Box
     for segment in inside:
         rows[round(segment.baseline, 1)].append(segment)
     broken = sum(len(row) > 1 for row in rows.values())
-    frame = _area(cell) > FRAME_SHARE * page_area or broken >= 2 or len(rows) > FRAME_LINES
+    # A cell of one line in several pieces is a stripe behind a row of an unruled table.
+    stripe = broken == len(rows) == 1
+    large = _area(cell) > FRAME_SHARE * page_area or len(rows) > FRAME_LINES
+    frame = large or broken >= 2 or stripe
     if frame:
         return [free_box(s) for s in inside]
     lines = sorted(inside, key=lambda s: (s.baseline, s.x0))

@@ -195,18 +195,25 @@ def _with_units(
             unit, source = _unit_behind(text, figures, index), "list"
         if not unit:
             unit, source = outer or "", "label"
+        if quantity is Quantity.VSWR and unit == "V":
+            unit = ""  # a ratio of voltages has no unit, whatever is printed
         if quantity is Quantity.IMPEDANCE and unit == "W":
             unit = "ohm"  # the symbol font's letter W prints an omega
         if unit and measures(unit) not in allowed:
             continue
-        if not unit:
+        if not unit and quantity is not Quantity.VSWR:
             if quantity in _NEEDS_UNIT or _stray_word_behind(text, figure):
                 continue
             source = "none"
-        if quantity is Quantity.VSWR and not _vswr_like(figure):
+        if quantity is Quantity.VSWR and not (_vswr_like(figure) and not _counted(text, figure)):
             continue
         kept.append((replace(figure, unit=unit), source))
     return kept
+
+
+def _counted(text: str, figure: Figure) -> bool:
+    """'2 ports' under VSWR counts something else; '1.5:1' never does."""
+    return not figure.ratio and _stray_word_behind(text, figure)
 
 
 def _vswr_like(figure: Figure) -> bool:
