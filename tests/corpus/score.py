@@ -75,6 +75,7 @@ class Result:
     statistic_right: int = 0
     matched: int = 0
     seconds: float = 0.0
+    by_sheet: list[float] = field(default_factory=list)
     reliability: dict[int, list[bool]] = field(default_factory=lambda: defaultdict(list))
 
 
@@ -203,6 +204,8 @@ def score(
                         tally = result.tallies[level][group]
                         setattr(tally, kind, getattr(tally, kind) + 1)
             if level == 2:
+                whole = 2 * len(pairs) + len(missed) + len(extra)
+                result.by_sheet.append(2 * len(pairs) / whole if whole else 1.0)
                 result.matched += len(pairs)
                 result.relation_right += sum(c.relation == f.relation for c, f in pairs)
                 result.statistic_right += sum(c.statistic == f.statistic for c, f in pairs)
@@ -261,7 +264,8 @@ def table(result: Result, prefixes: tuple[str, ...] = ("q:", "f:")) -> str:
     m = max(1, result.matched)
     lines += [
         "-" * 80,
-        f"sheets {result.sheets}, perfect {result.perfect}, failed {len(result.failed)}; "
+        f"sheets {result.sheets}, mean F2 of a sheet "
+        f"{sum(result.by_sheet) / max(1, len(result.by_sheet)):.3f}, perfect {result.perfect}, failed {len(result.failed)}; "
         f"invented {invented}; traps sprung {result.sprung.total()} of {result.traps} ({springs}); "
         f"relation right {result.relation_right / m:.3f}, statistic right "
         f"{result.statistic_right / m:.3f}; product time {result.seconds:.1f} s",
