@@ -16,10 +16,14 @@ import pytest
 from fixtures.hostile import CASES, Case
 from specs.errors import SheetError
 from specs.pipeline import Checker
+from specs.reading import Limits
 
 GOOD = Path(__file__).resolve().parents[2] / "fixtures" / "sheets" / "ka-d600-58-dish.pdf"
-SECONDS = 60.0
-"""No file may hold the caller longer: the limits of reading, and some air for a busy machine."""
+LIMITS = Limits(seconds=10.0)
+"""Tighter than in service, so that the whole run stays short."""
+
+SECONDS = 30.0
+"""No file may hold the caller longer: the limit of reading, and air for a busy machine."""
 
 GROWTH_MB = 400
 """How much the calling process may grow over the whole run; reading happens in a child."""
@@ -32,7 +36,7 @@ def resident_mb() -> float:
 
 @pytest.fixture(scope="module")
 def checker() -> Iterator[Checker]:
-    with Checker() as made:
+    with Checker(limits=LIMITS) as made:
         check(made, GOOD)
         yield made
 
