@@ -303,13 +303,14 @@ def main() -> None:
     options.add_argument("--quantity", help="show only faults of this quantity")
     options.add_argument("--phenomena", action="store_true", help="also by phenomenon and producer")
     options.add_argument("--reliability", action="store_true")
+    options.add_argument("--level", type=int, choices=(1, 2, 3), default=2, help="of the faults")
     options.add_argument("--write", type=Path, metavar="DIR")
     chosen = options.parse_args()
     import specs
 
     read: Reader = specs.read_sheet
     note = _writer(chosen.write) if chosen.write else None
-    result = score(sheets(chosen.split, chosen.limit, chosen.family), read, note=note)
+    result = score(sheets(chosen.split, chosen.limit, chosen.family), read, chosen.level, note)
     print(table(result, ("q:", "f:", "h:", "p:") if chosen.phenomena else ("q:", "f:")))
     if chosen.reliability:
         print(reliability(result))
