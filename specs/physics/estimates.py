@@ -186,3 +186,16 @@ def f699_gain_from_beamwidth_dbi(width_deg: Real) -> Real:
     44.5
     """
     return 44.5 - 20 * np.log10(width_deg)
+
+
+@elementwise
+def gaussian_width_deg(width_deg: Real, level_db: Real) -> Real:
+    """Half-power width of a Gaussian lobe that is ``width_deg`` wide ``level_db`` below its peak.
+
+    The level falls with the square of the angle, so θ3 = θ·√(3.0103/level). From −10 dB the factor
+    is √0.301 = 0.549. An assumption about the lobe, not an identity. Source: derived.
+
+    >>> round(gaussian_width_deg(55.0, 10.0), 1)
+    30.2
+    """
+    return width_deg * np.sqrt(to_db(2.0) / level_db)

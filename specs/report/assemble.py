@@ -31,9 +31,8 @@ from specs.report.model import (
 )
 from specs.rules import RULES_VERSION
 from specs.rules.cautions import cautions
-from specs.rules.engine import Judgement
-from specs.rules.finding import Bound, Finding, Ruler
-from specs.rules.sheet_rules import judge_whole_sheet
+from specs.rules.engine import judge_whole_sheet
+from specs.rules.finding import Bound, Finding, Judgement, Ruler
 from specs.rules.verdict import verdict_of, worst
 
 

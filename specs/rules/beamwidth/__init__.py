@@ -1,0 +1,1 @@
+"""Rules on gain against beamwidth."""

@@ -1,0 +1,1 @@
+"""Rules on identities: figures that physics ties to each other."""

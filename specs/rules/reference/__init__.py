@@ -1,0 +1,1 @@
+"""Rules on reference and unit: can the figure be judged as stated?"""

@@ -1,0 +1,1 @@
+"""Rules on the sheet as a whole."""
