@@ -133,7 +133,7 @@ def _claim(given: GivenClaim, claim_id: str) -> Claim:
         figure = _figure_from_text(given) if given.text is not None else _figure_from_value(given)
         qualifier = figure.qualifier
         stated = stated_from(figure, DEFAULT_UNIT.get(given.quantity))
-    statistic = given.statistic or (_STATISTIC_OF[qualifier] if qualifier else None)
+    statistic = given.statistic or _STATISTIC_OF.get(qualifier or "")
     low, high = given.band_mhz or (None, None)
     text = given.text or f"{given.value} {given.unit or ''}".strip()
     return Claim(

@@ -63,7 +63,7 @@ def _polarization_traits(claim: Claim) -> set[str]:
     words = fold(claim.stated.text).lower()
     found = set()
     for name in (Trait.CIRCULAR.value, Trait.LINEAR.value):
-        pattern = dict(_words()["traits"])[name]
+        pattern = dict(_words()["polarization"])[name]
         if pattern.search(words):
             found.add(name)
     return found

@@ -4,9 +4,8 @@ from __future__ import annotations
 
 from collections import defaultdict
 from dataclasses import replace
-from statistics import median
 
-from specs.claims import Antenna, Claim, Evidence, Quantity, Sheet, Stated, Unread
+from specs.claims import Antenna, Claim, Evidence, Quantity, Sheet, Stated, Trait, Unread
 from specs.claims.normalize import DEFAULT_UNIT, normalize
 from specs.claims.traits import antenna_type, traits_of
 from specs.extraction.claims_of import Draft, Surroundings, read_record
@@ -17,6 +16,7 @@ from specs.extraction.pairing import Pair, pairs
 from specs.extraction.prose import Mention, mentions
 from specs.extraction.records import Record, records
 from specs.extraction.tables import boxes
+from specs.extraction.titles import subject, title_size
 from specs.reading.document import Document, Page
 
 
@@ -25,15 +25,20 @@ def extract(document: Document) -> Sheet:
     antennas: list[Antenna] = []
     unread: list[Unread] = []
     whole_text: list[str] = []
+    positioning = False
     loose: list[tuple[int, Mention]] = []
     for page in document.pages:
         read = _Page(page)
         whole_text.extend(b.text for b in read.boxes)
-        positioning = "satellite positioning" in traits_of(" ".join(whole_text), ())
-        for record in read.records:
+        positioning = positioning or Trait.POSITIONING in read.traits
+        for position, record in enumerate(read.records):
             found = read_record(record, read.surroundings(positioning))
             unread.extend(found.unread)
-            antennas.extend(_antennas(record, found.drafts, read))
+            made = _antennas(record, found.drafts, read)
+            if antennas and position == 0 and page.number > 1 and _goes_on(record):
+                antennas[-1] = _continued(antennas[-1], made)
+                made = made[1:]
+            antennas.extend(made)
         loose.extend((page.number, m) for m in read.mentions())
     antennas = _joined(antennas)
     antennas = _with_mentions(antennas, loose, document)
@@ -60,6 +65,9 @@ class _Page:
         self.pairs = pairs(self.boxes)
         self.records = records(page.number, self.pairs, self.boxes)
         self.names = _model_names(self.pairs)
+        # Short texts give away facts that no claim holds, such as a noise figure.
+        self.traits = traits_of(" ".join(b.text for b in self.boxes if len(b.text) < 60), ())
+        self.subject, self.description = subject(self.boxes, page.height)
 
     def surroundings(self, positioning: bool) -> Surroundings:
         return Surroundings(
@@ -80,18 +88,8 @@ class _Page:
         """Identities of the boxes that pairs have used."""
         return self.values() | {id(p.box) for p in self.pairs}
 
-    def title_size(self) -> float:
-        sizes = [b.size for b in self.boxes]
-        return 1.25 * median(sizes) if sizes else 0.0
-
     def mentions(self) -> list[Mention]:
-        return mentions(self.boxes, self.used(), self.title_size())
-
-    def title(self) -> str:
-        """The large print of the upper half of the page."""
-        limit = self.title_size()
-        large = [b for b in self.boxes if b.size >= limit and b.top < self.page.height / 2]
-        return " ".join(b.printed for b in large[:6])
+        return mentions(self.boxes, self.used(), title_size(self.boxes))
 
 
 def _model_names(found: list[Pair]) -> dict[int, str]:
@@ -111,9 +109,9 @@ def _antennas(record: Record, drafts: list[Draft], page: _Page) -> list[Antenna]
     names = list(dict.fromkeys(d.name for d in drafts if d.name))
     gains = {d.name for d in drafts if d.name and d.claim.quantity in _TELLING}
     variants = [n for n in names if n in gains] if len(gains) >= 2 else []
-    title = page.title()
     if not variants:
-        label = record.name or _model_of(record) or (names[0] if len(names) == 1 else "") or title
+        only = names[0] if len(names) == 1 else None
+        label = record.name or _model_of(record) or only or page.subject
         return [_antenna(label, drafts, record, page)]
     return [
         _antenna(
@@ -136,7 +134,7 @@ def _model_of(record: Record) -> str | None:
 def _antenna(label: str, drafts: list[Draft], record: Record, page: _Page) -> Antenna:
     claims = _merged(drafts)
     words = " ".join(
-        [page.title(), record.name or "", label]
+        [page.description, record.name or "", label]
         + [
             r.pair.label.text + " " + v.text
             for r in record.rows
@@ -144,20 +142,34 @@ def _antenna(label: str, drafts: list[Draft], record: Record, page: _Page) -> An
             if len(v.text) < 60
         ]
     )
-    short = " ".join(b.text for b in page.boxes if len(b.text) < 60)
-    found = antenna_type(page.title()) or antenna_type(words)
+    found = antenna_type(page.description) or antenna_type(words)
     return Antenna(
         label=" ".join(label.split())[:120] or "antenna",
         claims=tuple(claims),
         type=found,
         type_inferred=found is not None,
-        traits=traits_of(words + " " + _plain_facts(short), claims),
+        traits=traits_of(words, claims) | page.traits,
     )
 
 
-def _plain_facts(text: str) -> str:
-    """Short texts of the page, for facts such as a noise figure that no claim holds."""
-    return text
+def _goes_on(record: Record) -> bool:
+    """Whether the first record of a page goes on with the antenna of the page before."""
+    return record.name is None and not record.has(Quantity.FREQUENCY) and _model_of(record) is None
+
+
+def _continued(antenna: Antenna, made: list[Antenna]) -> Antenna:
+    """An antenna with the figures of the next page, which hold for its one band."""
+    if not made:
+        return antenna
+    bands = {(c.normalized.low, c.normalized.high): c for c in antenna.claims
+             if c.quantity is Quantity.FREQUENCY}  # fmt: skip
+    only = next(iter(bands.values())) if len(bands) == 1 else None
+    band = None
+    if only is not None:
+        scale = only.normalized.nominal / ((only.stated.low + only.stated.high) / 2)
+        band = (only.stated.low * scale, only.stated.high * scale)
+    more = [replace(c, band_mhz=c.band_mhz or band) for c in made[0].claims]
+    return replace(antenna, claims=(*antenna.claims, *more), traits=antenna.traits | made[0].traits)
 
 
 def _merged(drafts: list[Draft]) -> list[Claim]:

@@ -174,6 +174,8 @@ def _phrase(lowered: str, at: int, draft: _Draft) -> int | None:
 
 def _is_name(lowered: str, at: int, end: int) -> bool:
     """BW-868-10, AR-5: a short head with a glued dash and a figure is a model name."""
+    if end - at <= 3 and re.match(r"\s\d+-?[a-z]\b(?!/)", lowered[end:]):
+        return True
     return (
         end - at <= 4
         and re.match(r"-?\w*\d", lowered[end:]) is not None
@@ -401,10 +403,12 @@ def _statistic(quantity: Quantity | None, names: list[str]) -> Statistic | None:
 
 
 def _relation_of(quantity: Quantity | None, statistic: Statistic | None) -> Relation | None:
+    if quantity is Quantity.POWER:
+        return Relation.AT_MOST  # a power rating is a limit, whatever the label says
     if statistic is Statistic.MINIMUM and quantity is not Quantity.FREQUENCY:
         return Relation.AT_LEAST
     if statistic is Statistic.MAXIMUM and quantity in (
-        Quantity.VSWR, Quantity.AXIAL_RATIO, Quantity.POWER,
+        Quantity.VSWR, Quantity.AXIAL_RATIO,
     ):  # fmt: skip
         return Relation.AT_MOST
     return None

@@ -244,7 +244,7 @@ def _extend(
     left = min(v.boxes[0].x0 for v in pair.values)
     if edge.ruled:
         return
-    step = 1.7 * edge.lines[0].height
+    step = 2.6 * edge.lines[0].height
     while True:
         beyond = [b for b in free if 0.5 < direction * (b.top - edge.top) <= step
                   and b.x0 > _right_edge(pair.box) - 1 and id(b) not in taken]  # fmt: skip

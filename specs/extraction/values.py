@@ -312,6 +312,7 @@ def _known(name: str) -> bool:
     return phrase_at(name.lower(), 0) is not None or unit_pattern().fullmatch(name) is not None
 
 
+_LESS_IS_BETTER = frozenset({Quantity.VSWR, Quantity.AXIAL_RATIO, Quantity.SIDELOBE_LEVEL})
 _PLANAR = frozenset({Quantity.BEAMWIDTH, Quantity.SIDELOBE_LEVEL})
 
 
@@ -341,7 +342,7 @@ def _letter_plane(before: str, behind: str) -> Plane | None:
 
 
 def _statistic(quantity: Quantity, qualifier: str | None) -> Statistic | None:
-    if qualifier is None:
+    if qualifier is None or qualifier == "better":
         return None
     found = _STATISTICS[qualifier]
     levels = (Quantity.GAIN, Quantity.DIRECTIVITY, Quantity.EFFICIENCY)
@@ -351,6 +352,8 @@ def _statistic(quantity: Quantity, qualifier: str | None) -> Statistic | None:
 
 
 def _relation(quantity: Quantity, qualifier: str | None, label: Label) -> Relation:
+    if qualifier == "better":
+        return Relation.AT_MOST if quantity in _LESS_IS_BETTER else Relation.AT_LEAST
     if qualifier == "minimum":
         return Relation.AT_LEAST
     if qualifier == "maximum" and quantity not in (Quantity.GAIN, Quantity.DIRECTIVITY):

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import ctypes
+from dataclasses import replace
 
 import numpy as np
 import numpy.typing as npt
@@ -17,7 +18,9 @@ WORD_GAP_EM = 0.17
 JUMP_EM = 0.3
 BACK_EM = 0.5
 UPRIGHT_DEGREES = 8.0
-_SOFT_HYPHEN = 0x02
+_HYPHENS = np.array([0x02, 0xAD, 0xFFFE])
+"""PDFium's marks of a hyphen at the end of a line, and the soft hyphen."""
+
 _SPACES = np.array([0x20, 0xA0, 0x09, 0x0A, 0x0D, 0x00, 0x3000, 0x2002, 0x2003, 0x2009, 0x202F])
 
 
@@ -28,7 +31,7 @@ def words(
     if len(chars.codes) == 0:
         return [], []
     codes, boxes = chars.codes.copy(), chars.boxes
-    codes[codes == _SOFT_HYPHEN] = ord("-")
+    codes[np.isin(codes, _HYPHENS)] = ord("-")
     blank = np.isin(codes, _SPACES)
     keep = np.flatnonzero(~blank & ~_doubled(codes, boxes, blank))
     if len(keep) == 0:
@@ -130,18 +133,16 @@ def _word(
 
 
 def _unmapped(code: int) -> bool:
-    return code in (0xFFFD, 0xFFFE, 0xFFFF) or code < 0x20
+    return code in (0xFFFD, 0xFFFF) or code < 0x20
 
 
 def _marks_raised(found: list[Word]) -> list[Word]:
     """Mark footnote signs: small, short, and set above the baseline of the word in front."""
-    from dataclasses import replace
-
     for position in range(1, len(found)):
         before, word = found[position - 1], found[position]
         if (
             len(word.text) <= 3
-            and word.size < 0.8 * before.size
+            and word.size < 0.9 * before.size
             and 0.2 * before.size < before.baseline - word.baseline < 0.8 * before.size
             and -0.3 * before.size < word.x0 - before.x1 < 0.5 * before.size
         ):
