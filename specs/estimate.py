@@ -74,9 +74,7 @@ def planning_gain(antenna: Antenna) -> PlanningGain | None:
     ceiling = min(s.high for s in against)
     floor = min((s.low for s in against), default=ceiling)
     middle = min((floor + ceiling) / 2, nominal)
-    basis = tuple(
-        f"{s.basis} gives {s.low:.1f} to {s.high:.1f} dBi, below the claim" for s in against
-    )
+    basis = tuple(f"{s.basis}: {s.low:.1f} to {s.high:.1f} dBi, below the claim" for s in against)
     shortfall = nominal - middle
     return PlanningGain(floor, ceiling, middle, basis, shortfall, 10 ** (-shortfall / 20))
 

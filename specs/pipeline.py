@@ -2,7 +2,8 @@
 
 ::
 
-    bytes --reading--> Document --extraction--> Sheet --rules, estimate--> judgements --report--> Report
+    bytes --reading--> Document --extraction--> Sheet
+          --rules, estimate--> judgements --report--> Report
 
 Untrusted bytes are taken this way in a child process with limits (``Checker``). Text that the
 caller already holds, and claims given as JSON, are judged in this process.
@@ -112,6 +113,22 @@ class Checker:
         """One page of a PDF as PNG. ``number`` counts from 1. Raises ``SheetError``."""
         return self._sandbox.run("image", data, number, dpi)
 
+    def page_images(
+        self, data: bytes, report: Report, most: int = 8
+    ) -> tuple[dict[int, bytes], dict[int, tuple[float, float]]]:
+        """Pictures (PNG) and sizes in points of the pages of a PDF that hold claims.
+
+        At most ``most`` pages, the first ones; nothing for a sheet that is no PDF.
+        """
+        if report.sheet.media_type != "application/pdf":
+            return {}, {}
+        numbers = sorted(
+            {e.page for a in report.antennas for c in a.claims for e in c.evidence if e.page}
+        )[:most]
+        sizes = json.loads(self._sandbox.run("sizes", data))
+        images = {n: self.page_image(data, n) for n in numbers}
+        return images, {n: tuple(sizes[n - 1]) for n in numbers}
+
     def close(self) -> None:
         """End the child processes."""
         self._sandbox.close()
@@ -136,6 +153,10 @@ def _work(task: str, data: bytes | Path, *rest: Any) -> bytes:
 
         number, dpi = rest
         return render_page(body, number, dpi=dpi)
+    if task == "sizes":
+        from specs.reading import page_sizes
+
+        return json.dumps(page_sizes(body)).encode()
     name, limits = rest
     if name.lower().endswith(".json"):
         report = check_claims(body, name)

@@ -153,7 +153,7 @@ def _special(
         return None
     drafts = []
     for extent in extents(label, value.text, row.pair.unit or head.unit):
-        stated = stated_from(extent.figure, extent.unit)
+        stated = replace(stated_from(extent.figure, extent.unit), text=_printed(value))
         claim = Claim(
             id="",
             quantity=Quantity.SIZE,
@@ -181,7 +181,7 @@ def _figures(
     label = row.pair.label
     assert label.quantity is not None
     if label.quantity in FREQUENCIES:
-        return _frequency_claims(row, value, head, readings, record, around, facts)
+        return _frequency_claims(row, value, head, readings, around, facts)
     drafts: list[Draft] = []
     for reading in readings:
         if suspicious(record, reading.quantity, reading.figure.low, around.positioning):
@@ -205,7 +205,6 @@ def _frequency_claims(
     value: Value,
     head: Head,
     readings: list[Reading],
-    record: Record,
     around: Surroundings,
     facts: frozenset[str],
 ) -> list[Draft]:

@@ -9,14 +9,14 @@ from specs.reading.read import read
 from specs.reading.sandbox import Sandbox
 
 if TYPE_CHECKING:
-    from specs.reading.pdf import page_count, render_page
+    from specs.reading.pdf import page_sizes, render_page
 
-__all__ = ["Limits", "Sandbox", "page_count", "read", "render_page"]
+__all__ = ["Limits", "Sandbox", "page_sizes", "read", "render_page"]
 
 
 def __getattr__(name: str) -> Any:
     # PDFium is loaded only where a PDF is read.
-    if name in ("page_count", "render_page"):
+    if name in ("page_sizes", "render_page"):
         from specs.reading import pdf
 
         return getattr(pdf, name)

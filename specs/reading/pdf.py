@@ -199,7 +199,7 @@ def render_page(data: bytes, number: int, dpi: float = 110) -> bytes:
         return image.getvalue()
 
 
-def page_count(data: bytes) -> int:
-    """Number of pages of a PDF. Raises a ``SheetError`` when it cannot be opened."""
+def page_sizes(data: bytes) -> list[tuple[float, float]]:
+    """Width and height in points of each page as shown. Raises a ``SheetError``."""
     with opened(data) as document:
-        return len(document)
+        return [document.get_page_size(index) for index in range(len(document))]

@@ -43,5 +43,5 @@ LENGTH = Need(
 )
 SIZE = _has(Quantity.SIZE, "the size of the radiating part")
 ELEMENTS = _has(Quantity.ELEMENTS, "the number of elements")
-AXIAL = Need("a polarization", lambda facts: facts.circular or facts.linear)
+AXIAL = Need("a polarization, linear or circular,", lambda facts: facts.circular or facts.linear)
 AZIMUTH_WIDTH = Need("an azimuth beamwidth", lambda facts: bool(facts.beamwidths(Plane.AZIMUTH)))

@@ -38,11 +38,10 @@ def _checked(judgement: Judgement) -> bool:
 
 
 def _because(findings: Sequence[Finding]) -> str:
-    first = findings[0].message.split(". ")[0].rstrip(".")
     more = len(findings) - 1
     if more == 0:
-        return f"{first}."
-    return f"{first}; and {more} more finding{'s' if more > 1 else ''} of this weight or less."
+        return findings[0].message
+    return f"{findings[0].message} {more} more finding{'s' if more > 1 else ''} of this weight."
 
 
 def worst(
