@@ -118,7 +118,8 @@ def beam_svg(antenna: AntennaEntry) -> Markup | None:
         f'<figure><svg role="img" aria-label="{escape(sentence)}" viewBox="0 0 560 256" '
         'width="560">'
         f'{"".join(parts)}</svg><figcaption class="small">Gain in dBi against the {name}. '
-        "Line: limit for any antenna; shaded: ordinary antennas; filled: this antenna.</figcaption></figure>"
+        "Line: limit for any antenna; shaded: ordinary antennas; filled: this antenna."
+        "</figcaption></figure>"
     )
 
 
