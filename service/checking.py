@@ -119,4 +119,4 @@ def plain_name(name: str) -> str:
         stem, dot, suffix = shown.rpartition(".")
         tail = dot + suffix if stem and len(suffix) <= 8 else ""
         shown = shown[: _LONGEST_NAME - len(tail) - 1] + "…" + tail
-    return shown or "sheet"
+    return shown if shown.strip(".") else "sheet"

@@ -8,7 +8,7 @@ from typing import Any
 
 from flask import Flask, Response, render_template, request
 from pydantic import BaseModel, Field, ValidationError
-from werkzeug.exceptions import HTTPException
+from werkzeug.exceptions import HTTPException, SecurityError
 
 from service.envelope import LOG, request_id
 from specs.errors import BeamproofError, ClaimsError
@@ -26,7 +26,7 @@ STATUS_OF = {
 _ADVICE_OF = {
     400: "Compare the request with /openapi.json.",
     403: "Send the request from a page of this service, or from a program.",
-    404: "Check the address; /openapi.json lists the ones of the API.",
+    404: "Check the address.",
     405: "Use one of the methods in the header 'Allow'.",
     413: "Send less: only the pages or the claims that matter.",
     415: "Send the media type that /openapi.json names for this address.",
@@ -136,8 +136,9 @@ def answer(
 
 
 def _wants_page() -> bool:
-    if request.path.startswith(_OUR_PATHS):
-        return False
+    is_known = not isinstance(request.routing_exception, SecurityError)
+    if request.path.startswith(_OUR_PATHS) or not is_known:
+        return False  # a page needs addresses, and those of an unknown host cannot be made
     kinds = ["application/json", MEDIA_TYPE, "text/html"]
     return request.accept_mimetypes.best_match(kinds) == "text/html"
 

@@ -46,13 +46,19 @@ def check_sheet(form: SheetUpload) -> Response:
     'Location' while the service runs and newer ones do not push it out.
     """
     files = request.files.getlist("file")
+    if not files:
+        fault = Fault(pointer="/file", detail="The field holds text, not a file")
+        return answer(
+            422, "request-invalid", "The field 'file' of the form holds no file.",
+            "Send it as a file, with a file name.", [fault],
+        )  # fmt: skip
     if len(files) > 1:
         fault = Fault(pointer="/file", detail=f"{len(files)} files were sent")
         return answer(
             422, "several-files", "The form holds several files.",
             "Send one request for each file.", [fault],
         )  # fmt: skip
-    kept = desk().check(form.file.read(), form.file.filename or "sheet")
+    kept = desk().check(files[0].read(), files[0].filename or "sheet")
     response = json_answer(kept.report, 201)
     response.headers["Location"] = url_for("sheets.sheet_report", sheet_id=kept.id)
     return response

@@ -53,6 +53,6 @@ def problems() -> str:
 
 def _typed(root: type[BeamproofError]) -> Iterator[Kind]:
     for error in root.__subclasses__():
-        meaning = (getdoc(error) or "").partition("\n")[0]
+        meaning = (getdoc(error) or "").partition("\n")[0].replace("``", "")
         yield Kind(error.code, STATUS_OF.get(error.code, 422), meaning, error.advice)
         yield from _typed(error)

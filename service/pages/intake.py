@@ -82,9 +82,11 @@ def _sheets() -> list[tuple[bytes, str]]:
         raise SheetTooLarge(f"{len(sent)} files were sent; at most {most} are taken at once.",
                             "Send them in several forms.")  # fmt: skip
     sheets = [(file.read(), file.filename or "sheet") for file in sent]
-    text = request.form.get("text", "")
+    text = request.form.get("text", "").encode("utf-8", "replace")
+    if len(text) > current_app.config["TEXT_BYTES"]:
+        raise SheetTooLarge(f"The pasted text has {len(text):,} bytes.", "Send it as a file.")
     if text.strip():
-        sheets.append((text.encode("utf-8", "replace"), "pasted-text.txt"))
+        sheets.append((text, "pasted-text.txt"))
     if not sheets:
         raise EmptySheet("There is no file and no text in the form.",
                          "Choose a file, or paste the text of a sheet.")  # fmt: skip

@@ -2,12 +2,12 @@
 
 from __future__ import annotations
 
+from decimal import Decimal
 from importlib.resources import files
 
 from flask import Blueprint, Response
 
 from specs.conversion import Conversion
-from specs.report.phrases import number
 
 pages = Blueprint("look", __name__)
 
@@ -24,10 +24,20 @@ def tokens() -> Response:
 
 @pages.app_template_filter("figure")
 def figure(value: float) -> str:
-    """A figure with five significant digits and a true minus."""
-    if value != 0 and abs(value) < 0.01:
-        return f"{value:.4g}".replace("-", "−")
-    return number(float(f"{value:.5g}"))
+    """A figure with four significant digits and a true minus.
+
+    >>> figure(0.325841), figure(-3258.41), figure(60.0)
+    ('0.3258', '−3258', '60')
+    """
+    digits = 0 if abs(value) >= 1000 else 4
+    rounded = round(value) if digits == 0 else Decimal(f"{value:.{digits}g}").normalize()
+    return format(rounded, "f" if digits else "d").replace("-", "−")
+
+
+@pages.app_template_filter("unit_in_print")
+def unit_in_print(unit: str) -> str:
+    """A unit as it is printed: m² for 'm2', nothing for a plain ratio."""
+    return {"x": "", "m2": "m²", "cm2": "cm²", "ft2": "ft²", "deg": "°"}.get(unit, unit)
 
 
 @pages.app_template_filter("span_of")
