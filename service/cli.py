@@ -1,4 +1,4 @@
-"""The command line: check sheets, convert figures, read the rules.
+"""The command line: check sheets, convert figures, read the rules, serve.
 
 Heavy imports stand inside the commands, so that ``beamproof --help`` answers at once.
 """
@@ -258,6 +258,25 @@ def schema(name: str) -> int:
 
     made = report_schema() if name == "report" else claims_schema()
     click.echo(json.dumps(made, indent=2, ensure_ascii=False))
+    return RELEASE
+
+
+@main.command()
+@click.option("--host", help="Loopback address to listen on; by default that of the settings.")
+@click.option("--port", type=click.IntRange(1, 65535), help="By default that of the settings.")
+def serve(host: str | None, port: int | None) -> int:
+    """Serve the pages and the API on this machine."""
+    from service.server import serve as served
+    from service.settings import SettingsError, from_environment
+
+    try:
+        settings = from_environment()
+        chosen = {k: v for k, v in (("host", host), ("port", port)) if v is not None}
+        served(type(settings).model_validate({**settings.model_dump(), **chosen}))
+    except SettingsError as error:
+        raise click.UsageError(str(error)) from error
+    except OSError as error:
+        raise click.ClickException(f"The address cannot be had: {error.strerror}.") from error
     return RELEASE
 
 

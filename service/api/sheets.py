@@ -38,7 +38,7 @@ def _expect_a_form() -> None:
 
 
 @api.post("/sheets", responses=answers(201, Report, 413, 415, 422, 503))
-def check_sheet(form: SheetUpload) -> Response:
+def check_sheet(form: SheetUpload) -> Response:  # noqa: ARG001 - declares the form in OpenAPI
     """Check a sheet.
 
     Answers with the report. Its id is the SHA-256 of the bytes: the same bytes have the same id.
