@@ -21,6 +21,7 @@ from specs.report.model import Report
 
 _EXTENSION = "beamproof-desk"
 _LONGEST_NAME = 120
+_PATIENCE_SECONDS = 1.0
 
 
 class ServiceBusy(BeamproofError):
@@ -38,7 +39,8 @@ class Desk:
         self._checker = Checker(workers=settings.readers, limits=limits)
         self._shelf = Shelf(settings.kept_reports, settings.kept_bytes)
         self._sheet_bytes = settings.sheet_bytes
-        # Two threads are never held by sheets, so that health and pages are always answered.
+        # Two threads are never held by sheets for longer than the patience, so that pages and
+        # health get their turn while long sheets are read.
         self._places = threading.BoundedSemaphore(settings.threads - 2)
 
     def check(self, data: bytes, name: str) -> Kept:
@@ -86,7 +88,7 @@ class Desk:
 
     @contextmanager
     def _place(self) -> Iterator[None]:
-        if not self._places.acquire(blocking=False):
+        if not self._places.acquire(timeout=_PATIENCE_SECONDS):
             raise ServiceBusy("As many sheets are being read as the service takes at once.")
         try:
             yield

@@ -40,6 +40,7 @@ def serve(settings: Settings) -> None:
         # The application answers 413 itself, with words; the server only stops what is far beyond.
         max_request_body_size=2 * max(settings.form_bytes, settings.sheet_bytes) + 1_000_000,
         channel_timeout=60,
+        connection_limit=1000,
         ident=None,
     )
     signal.signal(signal.SIGTERM, _stop)
