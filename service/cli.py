@@ -270,9 +270,7 @@ def serve(host: str | None, port: int | None) -> int:
     from service.settings import SettingsError, from_environment
 
     try:
-        settings = from_environment()
-        chosen = {k: v for k, v in (("host", host), ("port", port)) if v is not None}
-        served(type(settings).model_validate({**settings.model_dump(), **chosen}))
+        served(from_environment(host=host, port=port))
     except SettingsError as error:
         raise click.UsageError(str(error)) from error
     except OSError as error:

@@ -39,7 +39,7 @@ def judge_sheet(sheet: Sheet) -> Report:
 def check_text(text: str, name: str = "sheet.txt") -> Report:
     """The report on a sheet given as plain text or Markdown.
 
-    >>> check_text("Gain: 3 dBi\\nDirectivity: 2 dBi").verdict
+    >>> check_text("Gain: 3.1 dBi\\nDirectivity: 2.0 dBi").verdict.value
     'hold'
     """
     return judge_sheet(read_sheet(text.encode(), name))

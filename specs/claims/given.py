@@ -105,7 +105,7 @@ def _antenna(given: GivenAntenna, index: int) -> Antenna:
             claims.append(_claim(item, f"c{number}"))
         except UnitsError as error:
             place = f"/antennas/{index}/claims/{number - 1}"
-            raise ClaimsError(f"{place}: {error.message}", error.advice) from error
+            raise ClaimsError(f"{place}: {error.message}", error.advice or None) from error
     found = antenna_type(given.type or "")
     return Antenna(
         label=given.label,

@@ -35,14 +35,16 @@ WEIGHTS: dict[str, float] = {
 USUAL: dict[Quantity, tuple[float, float]] = {
     Quantity.GAIN: (-25.0, 65.0),
     Quantity.DIRECTIVITY: (0.0, 70.0),
-    Quantity.EFFICIENCY: (1.0, 100.0),
+    Quantity.EFFICIENCY: (0.5, 150.0),
     Quantity.BEAMWIDTH: (0.2, 360.0),
     Quantity.FREQUENCY: (0.1, 300_000.0),
-    Quantity.VSWR: (1.0, 12.0),
+    Quantity.VSWR: (0.5, 12.0),
     Quantity.RETURN_LOSS: (-45.0, 45.0),
     Quantity.FRONT_TO_BACK: (0.5, 80.0),
 }
-"""The ordinary range of a figure, in its normal unit (common practice, no source)."""
+"""The range in which a figure of a sheet can be meant, in its normal unit (common practice, no
+source). It reaches past what physics allows: a VSWR of 0.9 is a claim to be flagged, not a
+misreading to be hidden."""
 
 
 def confidence(facts: frozenset[str]) -> float:

@@ -191,6 +191,8 @@ def _with_units(
         if figure.times and quantity is not Quantity.BEAMWIDTH:  # 65° x 9° are two beamwidths
             continue
         unit, source = figure.unit, "value"
+        if not unit and _stray_word_before(text, figures, index):
+            continue
         if not unit:
             unit, source = _unit_behind(text, figures, index), "list"
         if not unit:
@@ -242,6 +244,18 @@ def _stray_word_behind(text: str, figure: Figure) -> bool:
     if _NAMED_BAND.match(behind):
         return False
     return found is None and len(re.split(r"[^\w]", behind)[0]) > 1
+
+
+def _stray_word_before(text: str, figures: list[Figure], index: int) -> bool:
+    """'see chart 7': a bare number behind unknown words is no figure of the label's."""
+    start = figures[index - 1].end if index else 0
+    before = text[start : figures[index].start]
+    if re.search(r"[:=]\s*(?:[<>]=?\s*)?$", before):
+        return False
+    words = re.findall(r"[^\W\d_]{3,}", before)
+    return bool(words) and all(
+        phrase_at(word.lower(), 0) is None and not _NAMED_BAND.match(word) for word in words
+    )
 
 
 def _surroundings(text: str, values: list[tuple[Figure, str]], index: int) -> tuple[str, str]:

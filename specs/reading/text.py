@@ -11,6 +11,8 @@ from specs.reading.grid import LINE, line_words, text_width
 from specs.reading.limits import Limits
 
 LINES_PER_PAGE = 400
+TITLE_SIZE = 14.0
+_HEADING = re.compile(r"#{1,2} (.{1,200})$")
 _CONTROL = re.compile(r"[\x00-\x08\x0b\x0e-\x1f\x7f]")
 
 
@@ -64,6 +66,10 @@ def _columns(line: str) -> str:
 def _page(number: int, lines: list[str]) -> Page:
     words: list[Word] = []
     for row, line in enumerate(lines):
-        words.extend(line_words(line[:2000], 0.0, row * LINE))
+        heading = _HEADING.match(line)
+        if heading:
+            words.extend(line_words(heading[1], 0.0, row * LINE, TITLE_SIZE))
+        else:
+            words.extend(line_words(line[:2000], 0.0, row * LINE))
     width = max((text_width(line[:2000]) for line in lines), default=0.0)
     return Page(number, max(width, 1.0), len(lines) * LINE, tuple(words))

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 from collections.abc import Sequence
+from functools import cache
 from importlib.metadata import version
 from typing import Literal
 
@@ -71,8 +72,14 @@ def build_report(
         cautions=list(cautions(sheet)),
         verdict=Verdict(verdict),
         reason=reason,
-        tool=Tool(version=version("beamproof"), rules_version=RULES_VERSION),
+        tool=Tool(version=_version(), rules_version=RULES_VERSION),
     )
+
+
+@cache
+def _version() -> str:
+    # Looking a distribution up reads its metadata from disk: once is enough.
+    return version("beamproof")
 
 
 def _read_by(sheet: Sheet) -> Literal["text", "ocr", "given"]:

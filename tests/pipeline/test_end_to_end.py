@@ -81,6 +81,23 @@ def test_the_accepted_example_of_a_rule_is_accepted(rule) -> None:  # type: igno
     assert all(f.severity == "note" for f in severe), severe
 
 
+# An invisible figure cannot be shown in plain text, so this one rule has no flagged example.
+FLAGGED = [r for r in RULES if r.id != "hidden-text"]
+
+
+@pytest.mark.parametrize("rule", FLAGGED, ids=lambda r: r.id)
+def test_the_flagged_example_of_a_rule_is_flagged(rule) -> None:  # type: ignore[no-untyped-def]
+    report = check_text(rule.sections["Flagged"])
+    found = [*report.findings, *(f for a in report.antennas for f in a.findings)]
+    assert rule.id in {f.rule for f in found}
+
+
+def test_a_number_behind_unknown_words_is_no_claim() -> None:
+    report = check_text("Frequency: 2400-2500 MHz\nGain: see chart 7")
+    assert not [c for a in report.antennas for c in a.claims if c.quantity == "gain"]
+    assert report.verdict.value == "query"
+
+
 def test_sheet_text_is_escaped_and_formulas_are_guarded() -> None:
     report = check_text("<script>alert(1)</script>\nFrequency: 2400-2500 MHz\nGain: 7 dBi")
     page = render_html(report)
