@@ -165,7 +165,12 @@ def _notes(pages: list[Page]) -> tuple[str, ...]:
     """Remarks on pages without text. Raises ``NoTextLayer`` or ``EmptySheet`` if none has any."""
     textless = [p for p in pages if not p.words]
     if len(textless) == len(pages):
-        if any(p.painted or p.rotated for p in pages):
+        if any(p.rotated for p in pages):
+            raise NoTextLayer(
+                "All text on the pages is turned or upside down, and was not read.",
+                "Turn the pages upright, save them as a new PDF, and send that.",
+            )
+        if any(p.painted for p in pages):
             raise NoTextLayer("The pages hold pictures or outlines, and no text.")
         raise EmptySheet("The pages of the PDF are blank.")
     notes = []

@@ -15,6 +15,8 @@ def read(data: bytes, name: str, limits: Limits | None = None) -> Document:
     ``Sandbox``.
     """
     limits = limits or Limits()
+    # A name may hold bytes that are no text; a report must be text throughout.
+    name = name.encode("utf-8", "replace").decode()
     if len(data) > limits.bytes:
         raise SheetTooLarge(f"The file has {len(data):,} bytes; {limits.bytes:,} are allowed.")
     kind = format_of(data, name)
