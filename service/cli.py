@@ -16,14 +16,14 @@ if TYPE_CHECKING:
     from specs.errors import BeamproofError
     from specs.report.model import Report
 
-RELEASE, QUERY, HOLD, UNREADABLE, USAGE = 0, 1, 2, 3, 64
+RELEASE, QUERY, HOLD, UNREADABLE, USAGE, BROKEN = 0, 1, 2, 3, 64, 70
 
 _SUFFIXES = frozenset({".pdf", ".txt", ".md", ".markdown", ".htm", ".html", ".json"})
 _FORMATS = ("text", "json", "html", "csv")
 
 
 class _Group(click.Group):
-    """Usage errors exit with 64, for 2 means hold."""
+    """Usage errors exit with 64, for 2 means hold; our own failures with 70, for 1 means query."""
 
     def main(self, *args: Any, **kwargs: Any) -> Any:
         kwargs["standalone_mode"] = False
@@ -36,7 +36,12 @@ class _Group(click.Group):
             click.echo("Stopped.", err=True)
             sys.exit(130)
         except BrokenPipeError:
-            sys.exit(RELEASE)
+            sys.exit(BROKEN)
+        except Exception as error:
+            # Python would exit with 1, which a purchasing gate reads as a verdict.
+            kind = type(error).__name__
+            click.echo(_printable(f"Beamproof failed ({kind}: {error}). No verdict."), err=True)
+            sys.exit(BROKEN)
         sys.exit(result if isinstance(result, int) else RELEASE)
 
 
@@ -61,7 +66,8 @@ def check(sources: tuple[str, ...], form: str, output: Path | None, jobs: int) -
       1  query     ask the vendor first
       2  hold      do not order on these figures
       3  a sheet could not be read
-      64 the command was not understood
+      64 the command was not understood, or its output could not be written
+      70 Beamproof itself failed; there is no verdict
     """
     from specs.pipeline import Checker
 
@@ -69,10 +75,11 @@ def check(sources: tuple[str, ...], form: str, output: Path | None, jobs: int) -
     if not items:
         raise click.UsageError("No sheet was found in the folders given.")
     many = len(items) > 1
-    if output is not None and many:
-        output.mkdir(parents=True, exist_ok=True)
+    if output is not None and many and form != "csv":
+        _folder(output)
     worst = RELEASE
     done: list[tuple[str, Report | BeamproofError]] = []
+    taken: set[Path] = set()
     with Checker(workers=min(jobs, len(items))) as checker:
         results = checker.check_many(items, _progress(len(items)) if many else None)
         for (data, name), (_, result) in zip(items, results, strict=True):
@@ -80,9 +87,10 @@ def check(sources: tuple[str, ...], form: str, output: Path | None, jobs: int) -
             if form == "csv" or (form == "json" and many and output is None):
                 done.append((name, result))
                 continue
-            _write(_rendered(form, result, name, data, checker, output), output, name, form, many)
+            path = _path(output, name, form, many, taken)
+            _write(_rendered(form, result, name, data, checker, output), path)
     if done:
-        _write(_together(form, done), output, "report", form, False)
+        _write(_together(form, done), _path(output, "report", form, False, taken))
     return worst
 
 
@@ -151,7 +159,7 @@ def _colour_wanted() -> bool:
 
 
 def _failure(form: str, error: BeamproofError, name: str) -> str:
-    click.echo(f"{name}: could not be read. {error}", err=True)
+    click.echo(_printable(f"{name}: could not be read. {error}"), err=True)
     if form != "json":
         return ""
     import json
@@ -182,16 +190,49 @@ def _together(form: str, done: list[tuple[str, Report | BeamproofError]]) -> str
     return report_csv(reports)
 
 
-def _write(text: str, output: Path | None, name: str, form: str, many: bool) -> None:
+def _folder(path: Path) -> None:
+    try:
+        path.mkdir(parents=True, exist_ok=True)
+    except OSError as error:
+        raise click.ClickException(
+            f"'{path}' cannot be made a folder: {error.strerror}."
+        ) from error
+
+
+def _path(output: Path | None, name: str, form: str, many: bool, taken: set[Path]) -> Path | None:
+    """Where a result is written: no two results of one run share a file."""
+    if output is None:
+        return None
+    if not many and not output.is_dir():
+        return output
+    suffix = {"text": "txt"}.get(form, form)
+    stem = Path(name).name
+    path = output / f"{stem}.{suffix}"
+    count = 1
+    while path in taken:
+        count += 1
+        path = output / f"{stem}-{count}.{suffix}"
+    taken.add(path)
+    return path
+
+
+def _write(text: str, path: Path | None) -> None:
     if not text:
         return
-    if output is None:
+    if path is None:
         click.echo(text.rstrip("\n"))
         return
-    suffix = {"text": "txt"}.get(form, form)
-    path = output / f"{Path(name).name}.{suffix}" if many else output
-    path.write_text(text if text.endswith("\n") else text + "\n", encoding="utf-8")
-    click.echo(f"wrote {path}", err=True)
+    try:
+        path.write_text(text if text.endswith("\n") else text + "\n", encoding="utf-8")
+    except OSError as error:
+        raise click.ClickException(f"'{path}' cannot be written: {error.strerror}.") from error
+    click.echo(_printable(f"wrote {path}"), err=True)
+
+
+def _printable(text: str) -> str:
+    from specs.report.phrases import printable
+
+    return printable(text)
 
 
 @main.command()

@@ -23,6 +23,11 @@ UNREAD_REASONS = {
 _UNIT = {"deg": "°", "%": " %", "": "", "ohm": " Ω", "m2": " m²"}
 
 
+def printable(text: str) -> str:
+    """Text without control characters: what a sheet says must not drive a terminal."""
+    return "".join(c if c.isprintable() else " " for c in text)
+
+
 def number(value: float) -> str:
     """A number without needless digits, with a true minus."""
     text = f"{value:.2f}".rstrip("0").rstrip(".") if abs(value) < 1000 else f"{value:.6g}"

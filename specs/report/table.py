@@ -7,6 +7,7 @@ import io
 from collections.abc import Iterable, Iterator
 
 from specs.report.model import AntennaEntry, Report
+from specs.report.phrases import printable
 
 COLUMNS = (
     "sheet", "sha256", "antenna", "type", "verdict", "claim", "quantity", "statistic", "plane",
@@ -35,7 +36,7 @@ def guarded(cell: object) -> object:
     """A cell that no spreadsheet runs as a formula; numbers stay numbers."""
     if not isinstance(cell, str):
         return cell
-    plain = "".join(c if c.isprintable() else " " for c in cell)
+    plain = printable(cell)
     return "'" + plain if plain[:1] in ("=", "+", "-", "@", "\t") else plain
 
 

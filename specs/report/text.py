@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import textwrap
+from enum import Enum
 
 from specs.report import ruler
 from specs.report.model import AntennaEntry, FindingEntry, Report
@@ -13,7 +14,7 @@ from specs.report.phrases import (
     condition,
     link_consequence,
     normalized,
-    number,
+    printable,
     quantity,
     where,
 )
@@ -24,7 +25,7 @@ _COLOURS = {"hold": "1;31", "query": "1;33", "release": "1;32", "impossible": "3
 
 def render_text(report: Report, colour: bool = False, width: int = 96) -> str:
     """The whole report as text; ``colour`` adds terminal colours to words that stand anyway."""
-    return _Text(report, colour, width).render()
+    return _Text(_cleaned(report), colour, width).render()
 
 
 class _Text:
@@ -34,10 +35,10 @@ class _Text:
 
     def render(self) -> str:
         sheet = self.report.sheet
-        self._add(f"{_clean(sheet.name)}   {sheet.pages} page{'s' * (sheet.pages != 1)}")
+        self._add(f"{sheet.name}   {sheet.pages} page{'s' * (sheet.pages != 1)}")
         self._add(f"{self._painted(self.report.verdict.value.upper(), self.report.verdict.value)}"
                   f"   {VERDICTS[self.report.verdict.value]}")  # fmt: skip
-        self._wrapped(_clean(self.report.reason), "")
+        self._wrapped(self.report.reason, "")
         for antenna in self.report.antennas:
             self._antenna(antenna)
         self._whole_sheet()
@@ -63,7 +64,7 @@ class _Text:
         kind = f"   {antenna.type}{' (inferred)' if antenna.type_inferred else ''}"
         kind = kind if antenna.type else ""
         verdict = self._painted(antenna.verdict.value, antenna.verdict.value)
-        self._add(f"{_clean(antenna.label)}{kind}   {verdict}")
+        self._add(f"{antenna.label}{kind}   {verdict}")
         self._add("─" * self.width)
         self._claims(antenna)
         for finding in antenna.findings:
@@ -73,7 +74,7 @@ class _Text:
 
     def _claims(self, antenna: AntennaEntry) -> None:
         rows = [
-            (c.id, quantity(c), f"“{_clean(c.stated.text)}”", normalized(c), condition(c), where(c))
+            (c.id, quantity(c), f"“{c.stated.text}”", normalized(c), condition(c), where(c))
             for c in antenna.claims
         ]
         if not rows:
@@ -88,14 +89,14 @@ class _Text:
         word = f"{SHAPES[finding.severity]} {finding.severity}"
         self._add(f"  {self._painted(word, finding.severity)}  {finding.rule}  "
                   f"[{', '.join(finding.claims)}]")  # fmt: skip
-        self._wrapped(_clean(finding.message), "    ")
+        self._wrapped(finding.message, "    ")
         if finding.ruler is not None:
             self.lines.extend("      " + line for line in ruler.as_text(finding.ruler))
         if finding.working:
             self._wrapped(f"Working: {finding.working}", "    ")
         if finding.assumption:
             self._wrapped(finding.assumption, "    ")
-        self._wrapped(f"Ask: {_clean(finding.question)}", "    ")
+        self._wrapped(f"Ask: {finding.question}", "    ")
 
     def _planning(self, antenna: AntennaEntry) -> None:
         gain = antenna.planning_gain
@@ -103,8 +104,8 @@ class _Text:
             return
         self._add("")
         self._add(
-            f"  Planning gain {number(gain.nominal)} dBi ({number(gain.low)} to "
-            f"{number(gain.high)}): {link_consequence(gain.shortfall_db, gain.range_factor)}"
+            f"  Planning gain {gain.nominal:.1f} dBi ({gain.low:.1f} to {gain.high:.1f}): "
+            f"{link_consequence(gain.shortfall_db, gain.range_factor)}"
         )
         for basis in gain.basis:
             self._wrapped(basis, "    ")
@@ -122,15 +123,15 @@ class _Text:
         for finding in self.report.findings:
             self._finding(finding)
         for failure in self.report.rule_failures:
-            self._add(f"  Rule {failure.rule} failed on {_clean(failure.antenna)}: {failure.error}")
+            self._add(f"  Rule {failure.rule} failed on {failure.antenna}: {failure.error}")
         if self.report.unread:
             self._add("")
             self._add("Unread: looked like a claim and was not used")
             for item in self.report.unread:
                 reason = UNREAD_REASONS.get(item.reason, item.reason)
-                self._wrapped(f"p. {item.page}  “{_clean(item.text)}”  {reason}", "  ")
+                self._wrapped(f"p. {item.page}  “{item.text}”  {reason}", "  ")
         for note in self.report.notes:
-            self._wrapped(f"Note: {_clean(note)}", "  ")
+            self._wrapped(f"Note: {note}", "  ")
 
 
 _CAPS = (5, 30, 30, 24, 16, 8)
@@ -140,6 +141,16 @@ def _cut(text: str, width: int) -> str:
     return text if len(text) <= width else text[: width - 1] + "…"
 
 
-def _clean(text: str) -> str:
-    """Text of a sheet without control characters, so that no sheet can drive a terminal."""
-    return "".join(c if c.isprintable() else " " for c in text)
+def _cleaned(report: Report) -> Report:
+    """The report with every text made printable, so that no field can be forgotten."""
+    return Report.model_validate(_printable(report.model_dump(by_alias=True)))
+
+
+def _printable(value: object) -> object:
+    if isinstance(value, str) and not isinstance(value, Enum):
+        return printable(value)
+    if isinstance(value, dict):
+        return {key: _printable(item) for key, item in value.items()}
+    if isinstance(value, list | tuple):
+        return [_printable(item) for item in value]
+    return value

@@ -32,7 +32,7 @@ def gain_words(claim: Claim) -> str:
     """A gain as stated, and on dBi where that differs: '17.0 dBd (19.2 dBi)'."""
     if claim.stated.unit == claim.normalized.unit:
         return stated(claim)
-    return f"{stated(claim)} ({figure(claim.normalized.nominal, 'dBi')})"
+    return f"{stated(claim)} ({figure(claim.normalized.nominal, 'dBi', 2)})"
 
 
 def _digits(half_step: float) -> int:
